@@ -1,0 +1,157 @@
+import type { Food } from './food.ts'
+import { type FoodIndex, indexFoods } from './food-index.ts'
+import { markedRanges } from './marked-ranges.ts'
+import { createNearWords } from './near-words.ts'
+import { plainText } from './plain-text.ts'
+import { type Candidate, rank } from './rank.ts'
+import { fold } from './words.ts'
+
+export interface FindOptions {
+  /** at most so many hits; 20 where not said */
+  limit?: number
+  /** only foods for which this holds */
+  accept?: (food: Food) => boolean
+}
+
+export interface Hit {
+  food: Food
+  /** higher fits better; for order only */
+  score: number
+  /** the letters of the food's name that the words met, as ranges, end exclusive; may be empty */
+  matched: [start: number, end: number][]
+}
+
+/** The search over one list of foods. Its index is made at the first search that needs it. */
+export interface Finder {
+  foods: readonly Food[]
+  /** the food of that id, if it is one of `foods` */
+  byId(id: string): Food | undefined
+  /** foods by name, alias, local name and state, best first; typing mistakes and unfinished words are forgiven */
+  find(words: string, options?: FindOptions): Hit[]
+  /** every food that answers the words, best first, with what is needed to tell sure from doubtful */
+  weigh(words: string): readonly Candidate[]
+}
+
+export type FoodReading = { ok: true; food: Food } | { ok: false; problem: string; nearest: Food[] }
+
+const DEFAULT_LIMIT = 20
+const REMEMBERED = 200
+
+export function createFinder(foods: readonly Food[]): Finder {
+  let index: FoodIndex | null = null
+  let near: ReturnType<typeof createNearWords> | null = null
+  let byId: Map<string, Food> | null = null
+  const answers = new Map<string, readonly Candidate[]>()
+
+  function weigh(words: string): readonly Candidate[] {
+    const key = words.slice(0, 400)
+    const known = answers.get(key)
+    if (known !== undefined) return known
+    index ??= indexFoods(foods)
+    near ??= createNearWords(index.vocabulary)
+    const candidates = rank(index, near, key)
+    if (answers.size >= REMEMBERED) answers.clear()
+    answers.set(key, candidates)
+    return candidates
+  }
+
+  return {
+    foods,
+    byId(id) {
+      byId ??= new Map(foods.map(food => [food.id, food]))
+      return byId.get(id)
+    },
+    weigh,
+    find(words, { limit = DEFAULT_LIMIT, accept } = {}) {
+      const exact = this.byId(words.trim())
+      const hits: Hit[] = []
+      if (exact !== undefined && (accept === undefined || accept(exact)) && limit > 0)
+        hits.push({ food: exact, score: 2, matched: markedRanges(exact.name, words) })
+      for (const { food, score } of weigh(words)) {
+        if (hits.length >= limit) break
+        if (food === exact || (accept !== undefined && !accept(food))) continue
+        hits.push({ food, score, matched: markedRanges(food.name, words) })
+      }
+      return hits
+    },
+  }
+}
+
+/** Up to `n` foods that the words may mean, for an error message; none where nothing is like them. */
+export function nearestFoods(words: string, finder: Finder, n = 3): Food[] {
+  return finder.find(words, { limit: n }).map(hit => hit.food)
+}
+
+/** What the words mean, how surely, and what else they may mean. */
+export type Resolution =
+  | { kind: 'food'; food: Food; candidate: Candidate | null }
+  | { kind: 'unknown' | 'unsure' | 'several' | 'no-such-state'; candidates: readonly Candidate[] }
+
+/** Foods whose words fit so nearly alike that choosing would be a guess. */
+const ALIKE = 0.03
+
+/**
+ * The one food that words mean: an id, a name or an alias as it stands, or else the best hit, if every word is
+ * answered, the state that was asked for is there, and no other kind of food fits as well.
+ */
+export function resolve(words: string, finder: Finder): Resolution {
+  const trimmed = words.trim()
+  const byId = finder.byId(trimmed) ?? finder.byId(trimmed.toLowerCase())
+  if (byId !== undefined) return { kind: 'food', food: byId, candidate: null }
+  const candidates = finder.weigh(words)
+  const folded = fold(trimmed)
+  const named = candidates.filter(({ food }) => fold(food.name) === folded)
+  if (named.length === 1) return { kind: 'food', food: named[0]!.food, candidate: named[0]! }
+  const top = candidates[0]
+  if (top === undefined) return { kind: 'unknown', candidates }
+  if (!top.whole) return { kind: 'unknown', candidates }
+  if (!top.inState) return { kind: 'no-such-state', candidates }
+  if (top.surety < 0.55) return { kind: 'unsure', candidates }
+  if (!top.first) {
+    const rivals = candidates.filter(
+      other => other.food.kin !== top.food.kin && other.inState && other.text > top.text - ALIKE,
+    )
+    if (rivals.length > 0) return { kind: 'several', candidates: [top, ...rivals] }
+  }
+  return { kind: 'food', food: top.food, candidate: top }
+}
+
+/** A food that a command names by id or in words. `problem` is one plain line and names the nearest itself. */
+export function foodByWords(text: string, finder: Finder): FoodReading {
+  const said = shown(text)
+  if (said === '') return { ok: false, problem: 'no food is named; give an id or words', nearest: [] }
+  const resolution = resolve(text, finder)
+  if (resolution.kind === 'food') return { ok: true, food: resolution.food }
+  const nearest = distinct(resolution.candidates).slice(0, 3)
+  return { ok: false, problem: foodProblem(said, resolution, nearest), nearest }
+}
+
+/** Why words name no one food, with the mend. */
+export function foodProblem(said: string, resolution: Resolution, nearest: readonly Food[]): string {
+  const ids = orList(nearest.map(food => food.id))
+  if (nearest.length === 0)
+    return `no food is called "${said}" or nearly so; look it up with: shortstave find WORD`
+  switch (resolution.kind) {
+    case 'several':
+      return `"${said}" may be any of several foods; say which: ${ids}`
+    case 'no-such-state':
+      return `"${said}" is not in the table in that state; it has ${ids}`
+    default:
+      return `no food is called "${said}"; nearest: ${ids}`
+  }
+}
+
+/** The foods of candidates, one of each kin in each state, kins that differ first to third. */
+export function distinct(candidates: readonly Candidate[]): Food[] {
+  return [...new Set(candidates.map(candidate => candidate.food))]
+}
+
+/** A user's words as a message may quote them. */
+export function shown(text: string): string {
+  const plain = plainText(text.slice(0, 1000)).replace(/\s+/g, ' ').trim()
+  return plain.length > 60 ? `${plain.slice(0, 59)}…` : plain
+}
+
+function orList(words: readonly string[]): string {
+  return words.length < 2 ? (words[0] ?? '') : `${words.slice(0, -1).join(', ')} or ${words.at(-1)}`
+}
