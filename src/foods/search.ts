@@ -122,28 +122,32 @@ export function foodByWords(text: string, finder: Finder): FoodReading {
   if (said === '') return { ok: false, problem: 'no food is named; give an id or words', nearest: [] }
   const resolution = resolve(text, finder)
   if (resolution.kind === 'food') return { ok: true, food: resolution.food }
-  const nearest = distinct(resolution.candidates).slice(0, 3)
-  return { ok: false, problem: foodProblem(said, resolution, nearest), nearest }
+  const nearest = nearestKinds(resolution, 3)
+  const why = whyNoFood(said, resolution)
+  const problem = nearest.length === 0 ? why : `${why}; nearest: ${orList(nearest.map(food => food.id))}`
+  return { ok: false, problem, nearest }
 }
 
-/** Why words name no one food, with the mend. */
-export function foodProblem(said: string, resolution: Resolution, nearest: readonly Food[]): string {
-  const ids = orList(nearest.map(food => food.id))
-  if (nearest.length === 0)
+/** Why words name no one food, without the foods that may be meant; those are offered beside it. */
+export function whyNoFood(said: string, resolution: Exclude<Resolution, { kind: 'food' }>): string {
+  if (resolution.candidates.length === 0)
     return `no food is called "${said}" or nearly so; look it up with: shortstave find WORD`
-  switch (resolution.kind) {
-    case 'several':
-      return `"${said}" may be any of several foods; say which: ${ids}`
-    case 'no-such-state':
-      return `"${said}" is not in the table in that state; it has ${ids}`
-    default:
-      return `no food is called "${said}"; nearest: ${ids}`
-  }
+  if (resolution.kind === 'several') return `"${said}" may be any of several foods; say which`
+  if (resolution.kind === 'no-such-state') return `"${said}" is not in the table in that state`
+  return `no food is called "${said}"`
 }
 
-/** The foods of candidates, one of each kin in each state, kins that differ first to third. */
-export function distinct(candidates: readonly Candidate[]): Food[] {
-  return [...new Set(candidates.map(candidate => candidate.food))]
+/** The foods to offer where words named no one food: of several kinds the first of each, else the best as they come. */
+export function nearestKinds(resolution: Exclude<Resolution, { kind: 'food' }>, n: number): Food[] {
+  const foods: Food[] = []
+  const kins = new Set<string>()
+  for (const { food } of resolution.candidates) {
+    if (resolution.kind === 'several' && kins.has(food.kin)) continue
+    kins.add(food.kin)
+    foods.push(food)
+    if (foods.length === n) break
+  }
+  return foods
 }
 
 /** A user's words as a message may quote them. */
