@@ -41,6 +41,11 @@ export function stateRank(food: Food): number {
   return place < 0 ? LAST : place
 }
 
+/** Is the state one that nobody means without saying so: flour of a pulse, sprouts? */
+export function isUnusualState(food: Food): boolean {
+  return stateRank(food) === LAST
+}
+
 /**
  * A little for foods that stand in every kitchen, to part equals: those that are the first answer to a bare word,
  * short names before long ones, plants before what is only for comparison. 0 to 0.06.

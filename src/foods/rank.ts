@@ -1,4 +1,4 @@
-import { everydayness, stateRank } from './everyday.ts'
+import { everydayness, isUnusualState, stateRank } from './everyday.ts'
 import type { Food } from './food.ts'
 import { type Entry, type FoodIndex, wordsBeginning } from './food-index.ts'
 import type { NearWord } from './near-words.ts'
@@ -208,7 +208,9 @@ function weigh(
   else if (exact) text += entry.kind === 'name' ? 0.12 : 0.1
   if (!isOwner) text *= OF_KIN
   if (!whole) text *= 0.6
-  const state = stateAsked ? stateGain : -0.015 * stateRank(food)
+  // a bare word's own food needs no state to be meant, nor an unusual state that has a name of its own (besan)
+  const named = isOwner && (first || (exact && isUnusualState(food)))
+  const state = stateAsked ? stateGain : named ? 0 : -0.015 * stateRank(food)
   const score = Math.max(0, text + state + everydayness(food))
   return { food, score, text, whole, inState, stateAsked, surety, first: first && surety >= 0.8, exact }
 }

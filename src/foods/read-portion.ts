@@ -99,7 +99,7 @@ function readParted(said: string, parted: Parted, finder: Finder, options: Porti
   const { grams } = weighed
   const problem = amountProblem(said, grams, food)
   if (problem !== null) return refused(problem, usualReadings(food))
-  const state = candidate !== null && !candidate.stateAsked && !candidate.exact ? stateNote(food, finder) : ''
+  const state = candidate !== null && !candidate.stateAsked ? stateNote(food, finder) : ''
   const notes = [...weighed.notes, state].filter(note => note !== '')
   const echo = `${said}: ${gramsText(grams)} ${food.name}${notes.length === 0 ? '' : ` (${notes.join('; ')})`}`
   return { ok: true, food, grams, measure: weighed.measure, echo }

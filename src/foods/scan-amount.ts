@@ -75,7 +75,7 @@ const FRACTION = /\s*(\d+)\s*\/\s*(\d+)(?![\d/])/y
 const THOUSANDS = /\s*(\d{1,3}),(\d{3})(?![\d.,])/y
 const DECIMAL = /\s*(\d+(?:[.,]\d+)?|[.,]\d+)(?![.,]?\d)/y
 /** what may not follow a number: an exponent or a percentage */
-const NO_NUMBER = /\s*%|e[-+]?\d|x[0-9a-f]/iy
+const NO_NUMBER = /\s*%|e[-+]?\d/iy
 const RANGE = /\s*(?:-|to\b|or\b|\.\.+)\s*/iy
 const TIMES = /\s*(?:x|\*|times)\s*(?=[\d.(])/iy
 const ARTICLE_AFTER_PART = /(?:\s+of)?\s+(?:an?|one|the)(?=\s)/iy
