@@ -1,4 +1,5 @@
 import { ALLERGEN_IDS, type AllergenId } from '../foods/allergens.ts'
+import { editDistance } from '../foods/edit-distance.ts'
 
 /**
  * The EU fourteen and the US nine by name.
@@ -111,27 +112,17 @@ export function readAllergens(text: string): AllergenReading {
   return { ok: false, problem: `not an allergen that is known here; nearest: ${nearest(key).join(', ')}` }
 }
 
+const MOST_EDITS = 40
+
 /** The three allergens with the word nearest to the key, by edits. */
 function nearest(key: string): AllergenId[] {
   return ALLERGEN_IDS.map(id => ({
     id,
-    edits: Math.min(...WORDS[id].split(', ').map(word => editsBetween(key.slice(0, 40), keyOf(word)))),
+    edits: Math.min(
+      ...WORDS[id].split(', ').map(word => editDistance(key.slice(0, 40), keyOf(word), MOST_EDITS)),
+    ),
   }))
     .sort((a, b) => a.edits - b.edits)
     .slice(0, 3)
     .map(({ id }) => id)
-}
-
-/** Levenshtein's distance: single letters put in, taken out or changed. */
-function editsBetween(a: string, b: string): number {
-  let row = Array.from({ length: b.length + 1 }, (_, j) => j)
-  for (let i = 1; i <= a.length; i++) {
-    const next = [i]
-    for (let j = 1; j <= b.length; j++) {
-      const change = row[j - 1]! + (a[i - 1] === b[j - 1] ? 0 : 1)
-      next.push(Math.min(change, row[j]! + 1, next[j - 1]! + 1))
-    }
-    row = next
-  }
-  return row[b.length]!
 }

@@ -43,11 +43,12 @@ export const YIELD_BASES = ['curated', 'water balance'] as const
 
 export const foodYieldSchema = z
   .object({
-    /** food weighed before, and the food that it becomes; `to` is null where the table has no such row */
-    from: id,
+    /** food weighed before, and the food that it becomes; null where the table has no such row (never both) */
+    from: id.nullable(),
     to: id.nullable(),
-    /** what happened to it: `boiled`, `soaked` */
-    method: z.string().min(1),
+    /** what it is before and after, as a cook says it: `dry`, `boiled` */
+    before: z.string().min(1),
+    after: z.string().min(1),
     /** g after / g before */
     factor: positive.max(15),
     low: positive.max(15),
@@ -57,41 +58,54 @@ export const foodYieldSchema = z
     provenance: z.string().min(1),
   })
   .refine(({ factor, low, high }) => low <= factor && factor <= high, 'low <= factor <= high')
+  .refine(({ from, to }) => from !== null || to !== null, 'a yield is of some food')
 export type FoodYield = z.infer<typeof foodYieldSchema>
 
 export const cookingMethodSchema = z
   .object({
     id,
-    /** food ids that are cooked so */
-    foods: z.array(id),
+    /** how the heat is applied: `simmer` in water, `soak` in boiling water off the heat, `warm` through, `bake`, `fry`, or none */
+    heat: z.enum(['simmer', 'soak', 'warm', 'bake', 'fry', 'none']),
     /** hours; both 0: no soak needed; least 0: may be soaked */
     soakHLeast: nonNegative.max(48),
     soakHMost: nonNegative.max(48),
-    /** parts water to one part food by volume; null: soaked or cooked without a set amount */
+    /** parts water to one part food by volume; null: no set amount */
     waterRatio: positive.max(12).nullable(),
-    /** boiled in plenty and drained, or until the water is taken up */
-    water: z.enum(['drain', 'absorb']),
+    /** boiled in plenty and drained, or until the water is taken up; null: no cooking water */
+    water: z.enum(['drain', 'absorb']).nullable(),
     /** minutes of hard boil inside the simmer time */
     hardBoilMin: nonNegative.max(60),
-    simmerMinLeast: nonNegative.max(600),
-    simmerMinMost: nonNegative.max(600),
+    /** minutes on the heat */
+    cookMinLeast: nonNegative.max(600),
+    cookMinMost: nonNegative.max(600),
     restMin: nonNegative.max(60),
     /** minutes at high pressure after the soak, pressure falling by itself; null: not in a pressure cooker */
-    pressureMin: nonNegative.max(120).nullable(),
+    pressureMin: positive.max(120).nullable(),
     rinse: z.boolean(),
     /** what to do, where the plain steps do not say it all */
     note: z.string(),
     source: z.string().min(1),
     provenance: z.string().min(1),
   })
-  .refine(m => m.soakHLeast <= m.soakHMost && m.simmerMinLeast <= m.simmerMinMost, 'least <= most')
-  .refine(m => m.hardBoilMin <= m.simmerMinMost, 'the hard boil lies inside the simmer time')
+  .refine(m => m.soakHLeast <= m.soakHMost && m.cookMinLeast <= m.cookMinMost, 'least <= most')
+  .refine(m => m.hardBoilMin <= m.cookMinLeast, 'the hard boil lies inside the time on the heat')
 export type CookingMethod = z.infer<typeof cookingMethodSchema>
+
+export const storageTextSchema = z.object({
+  id,
+  text: z.string().min(20).max(320),
+  source: z.string().min(1),
+  provenance: z.string().min(1),
+})
+export type StorageText = z.infer<typeof storageTextSchema>
 
 export const kitchenFileSchema = z.object({
   cautions: z.array(cautionTextSchema),
   conditions: z.array(conditionTextSchema),
   yields: z.array(foodYieldSchema),
   cooking: z.array(cookingMethodSchema),
+  /** food id to the id of its cooking method; a food that is not here is eaten as it is */
+  cookingOf: z.record(id, id),
+  storage: z.array(storageTextSchema),
 })
 export type KitchenFile = z.infer<typeof kitchenFileSchema>

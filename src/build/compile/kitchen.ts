@@ -7,7 +7,10 @@ import {
   conditionTextSchema,
   type KitchenFile,
   kitchenFileSchema,
+  storageTextSchema,
 } from '../../kitchen/kitchen-file.ts'
+import { compileCooking } from './cooking.ts'
+import { compileYields } from './yields.ts'
 
 /** The rows of a CSV as the compiler takes them: text by column, and the line in the file for messages. */
 type Row = Record<string, string>
@@ -42,8 +45,9 @@ export function compileKitchen(foods: readonly Food[], rows: ReadRows = readCura
       source: row.source,
       provenance: row.provenance,
     })),
-    yields: [],
-    cooking: [],
+    yields: compileYields(foods, rows('yields')),
+    ...compileCooking(foods, rows('cooking')),
+    storage: each('storage', rows, storageTextSchema, row => row),
   }
   refuseUnknownCautions(foods, kitchen)
   return kitchenFileSchema.parse(kitchen)
@@ -51,9 +55,13 @@ export function compileKitchen(foods: readonly Food[], rows: ReadRows = readCura
 
 /** data/kitchen.json: one row a line, so that a change shows as the rows that changed. */
 export function kitchenJson(kitchen: KitchenFile): string {
-  const parts = Object.entries(kitchen).map(
-    ([name, rows]) => `"${name}":[\n${rows.map(row => JSON.stringify(row)).join(',\n')}\n]`,
-  )
+  const parts = Object.entries(kitchen).map(([name, part]) => {
+    const lines: string[] = Array.isArray(part)
+      ? part.map(row => JSON.stringify(row))
+      : Object.entries(part).map(([key, value]) => `${JSON.stringify(key)}:${JSON.stringify(value)}`)
+    const [open, close] = Array.isArray(part) ? '[]' : '{}'
+    return `"${name}":${open}\n${lines.join(',\n')}\n${close}`
+  })
   return `{${parts.join(',\n')}}\n`
 }
 
