@@ -47,12 +47,12 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
   const entryAt: number[] = []
   const weightAt: number[] = []
   const positions = new Map<string, number[]>()
-  const aliasByKey = new Map<string, Entry>()
+  /** by kin, then by text */
+  const aliases: Map<string, Entry>[] = []
 
   function add(kind: Entry['kind'], text: string, food: number, kin: number): void {
-    const key = `${kind} ${kin} ${text}`
-    const present = kind === 'name' ? undefined : aliasByKey.get(key)
-    if (present !== undefined) {
+    const present = kind === 'name' ? undefined : aliases[kin]!.get(text)
+    if (present !== undefined && present.kind === kind) {
       if (!present.owners.includes(food)) present.owners.push(food)
       return
     }
@@ -67,18 +67,17 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
       head: from,
       weight: 0,
     }
-    const seen = new Set<string>()
-    const parts = partsOf(text)
-    for (const [place, part] of parts.entries()) {
+    const seen: string[] = []
+    for (const [place, part] of partsOf(text).entries()) {
       for (const word of wordsOf(part.text)) {
-        if (seen.has(word)) continue
-        seen.add(word)
+        if (seen.includes(word)) continue
+        seen.push(word)
         const isState = statesOf(word) !== null
         const weight =
           place === 0 ? FIRST_PART : isState ? STATE_WORD : part.bracketed ? IN_BRACKETS : later(place)
         if (isState && kind === 'alias') entry.ownOnly = true
-        if (place === 0) entry.head = entryAt.length
         const position = entryAt.length
+        if (place === 0) entry.head = position
         entryAt.push(entries.length)
         weightAt.push(weight)
         entry.weight += weight
@@ -90,7 +89,7 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
     }
     if (entry.length === 0) return
     entries.push(entry)
-    if (kind !== 'name') aliasByKey.set(key, entry)
+    if (kind !== 'name') aliases[kin]!.set(text, entry)
   }
 
   for (const [place, food] of foods.entries()) {
@@ -99,6 +98,7 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
       kin = kins.length
       kinByName.set(food.kin, kin)
       kins.push([])
+      aliases.push(new Map())
     }
     kins[kin]!.push(place)
     add('name', food.name, place, kin)

@@ -38,7 +38,9 @@ export function singular(word: string): string {
   const known = IRREGULAR.get(word)
   if (known !== undefined) return known
   if (word.length < 4 || !word.endsWith('s')) return word
-  if (/(ss|us|is|os)$/.test(word)) return word.endsWith('os') && word.length > 4 ? word.slice(0, -1) : word
+  const before = word[word.length - 2]
+  if (before === 's' || before === 'u' || before === 'i') return word
+  if (word.endsWith('os') && word.length === 4) return word
   if (word.endsWith('ies') && word.length > 4) return `${word.slice(0, -3)}y`
   if (word.endsWith('oes')) return word.slice(0, -2)
   if (/(ch|sh|x|ss|zz)es$/.test(word)) return word.slice(0, -2)
@@ -164,13 +166,37 @@ function stemsOf(written: string): readonly string[] {
  */
 export function wordsOf(text: string): string[] {
   const words: string[] = []
-  for (const written of fold(text).match(WORD) ?? []) {
+  for (const written of writtenWords(text)) {
     const stems = stemsOf(written)
     if (stems.length === 1) words.push(stems[0]!)
     else words.push(...stems)
   }
   return words
 }
+
+/**
+ * The runs of letters and digits of a text, folded. Thousands of aliases pass here before a first search is answered,
+ * nearly all in plain ASCII, which needs no pattern.
+ */
+function writtenWords(text: string): string[] {
+  const lower = text.toLowerCase()
+  const words: string[] = []
+  let start = -1
+  for (let i = 0; i < lower.length; i++) {
+    const code = lower.charCodeAt(i)
+    if (code > 127 || code === APOSTROPHE || code === BACKTICK) return fold(text).match(WORD) ?? []
+    const isWord = (code >= 97 && code <= 122) || (code >= 48 && code <= 57)
+    if (isWord && start < 0) start = i
+    else if (!isWord && start >= 0) {
+      words.push(lower.slice(start, i))
+      start = -1
+    }
+  }
+  if (start >= 0) words.push(start === 0 ? lower : lower.slice(start))
+  return words
+}
+const APOSTROPHE = 39
+const BACKTICK = 96
 
 /** The same words with the place of each in the text, end exclusive, for marking. */
 export function placedWords(text: string): Word[] {
