@@ -68,11 +68,29 @@ export function ownFoodOf(
   table: Pick<Table, 'foodById'>,
   taken: Iterable<string> = [],
 ): OwnFoodReading {
-  const name = plainText(String(input.name ?? ''))
+  const name = plainName(input.name)
+  return checked(
+    { ...input, name, role: input.role ?? usualRole(input, table), id: ownIdOf(name, taken) },
+    table,
+  )
+}
+
+/** The own food with some of it changed, its id kept, or every reason why it cannot be. */
+export function editOwnFood(
+  own: OwnFood,
+  changes: Partial<OwnFoodInput>,
+  table: Pick<Table, 'foodById'>,
+): OwnFoodReading {
+  return checked({ ...own, ...changes, name: plainName(changes.name ?? own.name), id: own.id }, table)
+}
+
+const plainName = (name: unknown): string =>
+  plainText(String(name ?? ''))
     .replace(/ +/g, ' ')
     .trim()
-  const role = input.role ?? usualRole(input, table)
-  const parsed = ownFoodSchema.safeParse({ ...input, name, role, id: ownIdOf(name, taken) })
+
+function checked(given: z.input<typeof ownFoodSchema>, table: Pick<Table, 'foodById'>): OwnFoodReading {
+  const parsed = ownFoodSchema.safeParse(given)
   if (!parsed.success) {
     return {
       ok: false,
@@ -81,10 +99,28 @@ export function ownFoodOf(
       ),
     }
   }
-  const own = { ...parsed.data, note: plainText(parsed.data.note) }
-  own.measures = own.measures.map(measure => ({ ...measure, name: plainText(measure.name) }))
+  const own = {
+    ...parsed.data,
+    note: plainText(parsed.data.note),
+    measures: parsed.data.measures.map(measure => ({ ...measure, name: plainText(measure.name) })),
+  }
   const problems = ownFoodProblems(own, table)
   return problems.length === 0 ? { ok: true, own } : { ok: false, problems }
+}
+
+/**
+ * What uses an own food, in one line to warn with before it is changed or removed; null: nothing does.
+ *
+ * @param plates the plates that are kept or open, by name
+ */
+export function usesOfOwnFood(
+  id: string,
+  shelf: readonly { food: string }[],
+  plates: readonly { name: string; foods: readonly string[] }[] = [],
+): string | null {
+  const uses = shelf.some(({ food }) => food === id) ? ['your shelf'] : []
+  for (const { name, foods } of plates) if (foods.includes(id)) uses.push(plainText(name))
+  return uses.length === 0 ? null : `it is used by ${uses.join(', ')}`
 }
 
 /** A powder where half of it is protein, else what its first part is. */

@@ -28,6 +28,8 @@ export interface CardRequest {
   settings: { units: Units; conditions?: readonly string[] }
   /** the meal goes into boxes for later */
   boxed?: boolean
+  /** the line on vitamin B12, where it is due today (vitamin-b12.ts) */
+  b12?: { text: string; source: string } | null
 }
 
 export interface TakenFood {
@@ -111,7 +113,7 @@ export function cardOf(request: CardRequest, kitchen: KitchenFile = loadKitchen(
     ...mineralsOf(portions),
     allergens: [...new Set(foods.flatMap(({ allergens }) => allergens))],
     cautions: cautionsFor(foods, { conditions, boxed: request.boxed ?? false, portions }, kitchen.cautions),
-    notes: back.notes,
+    notes: [...back.notes, ...(request.b12 ? [{ id: 'vitamin-b12', ...request.b12 }] : [])],
     storage: storageOf(foods, kitchen),
     standingNote: STANDING_NOTE,
   }

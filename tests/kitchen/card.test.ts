@@ -10,6 +10,7 @@ import { cardMarkdown } from '../../src/kitchen/card-markdown.ts'
 import { cardText } from '../../src/kitchen/card-text.ts'
 import type { CookingMethod, KitchenFile } from '../../src/kitchen/kitchen-file.ts'
 import { loadKitchen } from '../../src/kitchen/load.ts'
+import { b12NoteFor } from '../../src/kitchen/vitamin-b12.ts'
 import { STAVES } from '../../src/nutrition/amino-acids.ts'
 import { scorePlate } from '../../src/nutrition/plate-score.ts'
 import { aFood } from './a-food.ts'
@@ -158,6 +159,14 @@ describe('the card', () => {
 
   test('foods that nothing is known to be done with are said to be as they are', () => {
     expect(card().asItIs.map(({ id }) => id)).toEqual([rice.id])
+  })
+
+  test('the line on vitamin B12 stands where it is given', () => {
+    const b12 = b12NoteFor([beans, rice], { lastDay: null, today: '2026-12-01' })
+    for (const [, render] of renderers) {
+      expect(render(card({ b12 }))).toContain('B12')
+      expect(render(card())).not.toContain('B12')
+    }
   })
 
   test('staves in words', () => {

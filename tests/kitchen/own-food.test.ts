@@ -1,8 +1,16 @@
 import fc from 'fast-check'
 import { describe, expect, test } from 'vitest'
 import { foodSchema } from '../../src/foods/food.ts'
-import { ingredientsOf } from '../../src/foods/ingredient-list.ts'
-import { madeOf, type OwnFoodInput, ownFoodOf, ownFoodToFood, ownIdOf } from '../../src/foods/own-food.ts'
+import { ingredientsOf, readLabel } from '../../src/foods/ingredient-list.ts'
+import {
+  editOwnFood,
+  madeOf,
+  type OwnFoodInput,
+  ownFoodOf,
+  ownFoodToFood,
+  ownIdOf,
+  usesOfOwnFood,
+} from '../../src/foods/own-food.ts'
 import { withOwnFoods } from '../../src/foods/own-table.ts'
 import { readParts } from '../../src/foods/protein-parts.ts'
 import { tableOf } from '../../src/foods/table.ts'
@@ -252,6 +260,27 @@ describe('an own food', () => {
   })
 })
 
+describe('changing an own food', () => {
+  test('keeps its id, and is checked like a new one', () => {
+    const own = made()
+    const edited = editOwnFood(own, { name: 'Another name', kcal: 120 }, table)
+    expect(edited).toMatchObject({
+      ok: true,
+      own: { id: own.id, name: 'Another name', kcal: 120, proteinG: 24 },
+    })
+    expect(editOwnFood(own, { kcal: 1 }, table)).toMatchObject({ ok: false })
+  })
+
+  test('warns of what uses it', () => {
+    const plates = [{ name: 'Monday\u0007 box', foods: ['own-bar', 'rice-white-dry'] }]
+    expect(usesOfOwnFood('own-bar', [{ food: 'own-bar' }], plates)).toBe(
+      'it is used by your shelf, Monday box',
+    )
+    expect(usesOfOwnFood('own-bar', [], [])).toBeNull()
+    expect(usesOfOwnFood('own-other', [{ food: 'own-bar' }], plates)).toBeNull()
+  })
+})
+
 describe('the table with own foods', () => {
   test('holds them behind its own, and tells of those that no longer hold', () => {
     const own = made()
@@ -278,5 +307,21 @@ describe('ingredients of a label', () => {
     ['open (bracket, oats', ['open bracket', 'oats']],
   ])('%j', (text, expected) => {
     expect(ingredientsOf(text)).toEqual(expected)
+  })
+
+  test('foods of a label in its order, each once; what is not known is told', () => {
+    const reading = readLabel('Rice, salt, pea protein, rice, flavouring', resolve)
+    expect(reading).toMatchObject({ ok: true, leftOut: ['salt', 'flavouring'] })
+    expect(reading.ok && reading.foods.map(({ id }) => id)).toEqual([rice.id, pea.id])
+  })
+
+  test.each([
+    ['', /give the ingredients/],
+    ['salt, water', /no ingredient that brings protein is known: salt, water/],
+    ['sugar', /no ingredient that brings protein/],
+    ['rice,'.repeat(50), /50 ingredients are too many/],
+  ])('%j is refused with the reason', (text, reason) => {
+    const reading = readLabel(text, resolve)
+    expect(reading.ok ? '' : reading.problem).toMatch(reason)
   })
 })
