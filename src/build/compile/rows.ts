@@ -1,0 +1,48 @@
+import { parse } from 'csv-parse/sync'
+import type { Problems } from './problems.ts'
+
+/** A row of a curation file: text by column, and where it stands, for messages. */
+export interface Row {
+  where: string
+  text: Record<string, string>
+}
+
+/** The rows of a CSV text whose first line is the header. `file` names it in messages. */
+export function rowsOf(csv: string, file: string): Row[] {
+  const records = parse(csv, { columns: true, skip_empty_lines: true, bom: true, trim: true }) as Record<
+    string,
+    string
+  >[]
+  return records.map((text, i) => ({ where: `${file}, row ${i + 2}`, text }))
+}
+
+/** A number, or null for an empty cell; anything else is a problem. */
+export function numberOf(row: Row, column: string, problems: Problems): number | null {
+  const cell = row.text[column] ?? ''
+  if (cell === '') return null
+  const value = Number(cell)
+  if (Number.isFinite(value)) return value
+  problems.add(row.where, `${column} is "${cell}"; give a number`)
+  return null
+}
+
+/** The items of a cell, separated by a bar. */
+export function listOf(row: Row, column: string): string[] {
+  return (row.text[column] ?? '')
+    .split('|')
+    .map(item => item.trim())
+    .filter(item => item !== '')
+}
+
+/** Rows by a column's value; a value that stands twice is a problem. */
+export function indexRows(rows: readonly Row[], column: string, problems: Problems): Map<string, Row> {
+  const index = new Map<string, Row>()
+  for (const row of rows) {
+    const key = row.text[column] ?? ''
+    const earlier = index.get(key)
+    if (earlier !== undefined)
+      problems.add(row.where, `${column} "${key}" stands already in ${earlier.where}; remove one`)
+    else index.set(key, row)
+  }
+  return index
+}
