@@ -31,6 +31,8 @@ export interface PairingProblem {
   massAtMostG: number | null
   /** how many different pairings to return */
   pairings: number
+  /** foods that could be bought, for what would lift a pairing; none: the shelf alone */
+  market?: readonly Food[]
 }
 
 /** One change that would raise the DIAAS of a plate: `deltaG` more (or less) of a food. */

@@ -1,0 +1,127 @@
+import type { Food } from '../foods/food.ts'
+import { scorePlate } from '../nutrition/plate-score.ts'
+import type { Portion } from '../nutrition/protein-source.ts'
+import { type Admitted, admit } from './admit.ts'
+import { differentProposals } from './different.ts'
+import type { Window } from './grams.ts'
+import { liftContext, nextLift } from './lift.ts'
+import { nearestPlate, type Reach } from './nearest.ts'
+import { practicalGrams } from './practical.ts'
+import type { Pairing, PairingAnswer, PairingProblem } from './problem.ts'
+import { whyOf } from './reasons.ts'
+import { better, type Proposal, Search } from './search.ts'
+import { thriftyGrams } from './thrift.ts'
+
+/** Protein may be over its target by this share. */
+const WINDOW_SHARE = 0.05
+
+/**
+ * Solves the pairing problem: the few foods of a shelf, in practical grams a serving, that reach the protein target
+ * with the greatest min(DIAAS, 100); several different ones, the best first, each with its reason. Where the target
+ * cannot be reached, or marks contradict each other, `reason` says so in words and numbers and the nearest plate is
+ * given. Deterministic; throws nothing.
+ */
+export function findPairings(problem: PairingProblem): PairingAnswer {
+  const admitted = admit(problem)
+  if (admitted.contradictions.length > 0) return unanswered(`${admitted.contradictions.join('; ')}.`)
+  if (problem.shelf.length === 0) return unanswered('The shelf is empty; put foods on it first.')
+  if (admitted.forced.length + admitted.open.length === 0) return unanswered(nothingOpen(admitted))
+  const window = windowOf(problem)
+  const proposals = bestProposals(problem, admitted, window)
+  if (proposals.length === 0) return nearest(problem, admitted, window)
+  return {
+    reached: true,
+    pairings: proposals
+      .map(proposal => practical(proposal, window))
+      .sort((a, b) => (better(a, b) ? -1 : better(b, a) ? 1 : 0))
+      .map(proposal => pairingOf(proposal, problem)),
+    reason: null,
+  }
+}
+
+/** The protein window and ceilings of a problem. */
+export function windowOf(problem: PairingProblem): Window {
+  return {
+    leastProteinG: problem.targetG,
+    mostProteinG: problem.targetG * (1 + WINDOW_SHARE),
+    energyAtMostKcal: problem.energyAtMostKcal,
+    massAtMostG: problem.massAtMostG,
+  }
+}
+
+/** The different proposals with their exact (continuous) grams, the best first; empty where none is feasible. */
+export function bestProposals(problem: PairingProblem, admitted: Admitted, window: Window): Proposal[] {
+  const { forced, open } = admitted
+  const space = { forced, open, foodsAtMost: problem.foodsAtMost, window }
+  const forcedKins = new Set(forced.map(({ food }) => food.kin))
+  // A few more than are asked for, so that different ones are among them.
+  const found = new Search(space, 4 * problem.pairings).run()
+  return differentProposals(found, problem.pairings, forcedKins)
+}
+
+/** Exact grams made practical: first the thriftiest that keep the score, then steps that a cook can weigh. */
+function practical(proposal: Proposal, window: Window): Proposal {
+  const { set, quality } = proposal
+  const kept = Math.min(1, quality) - 1e-9
+  const exact = thriftyGrams(set, window, kept) ?? proposal.grams
+  const rounded = practicalGrams(set, exact, window)
+  const grams = Float64Array.from(rounded.grams)
+  const kcal = set.reduce((sum, food, j) => sum + food.kcal * grams[j]!, 0)
+  return { ...proposal, grams, quality: rounded.quality, kcal }
+}
+
+function pairingOf(proposal: Proposal, problem: PairingProblem): Pairing {
+  const portions = proposal.set
+    .map(({ food }, j): Portion<Food> => ({ food, grams: proposal.grams[j]! }))
+    .sort((a, b) => b.grams * b.food.per100g.proteinG - a.grams * a.food.per100g.proteinG)
+  const score = scorePlate(portions, problem.basis)
+  const lift = nextLift(portions, liftContext(problem))
+  return { portions, score, why: whyOf(score), nextLift: lift }
+}
+
+function unanswered(reason: string): PairingAnswer {
+  return { reached: false, pairings: [], reason }
+}
+
+function nothingOpen({ keptOut }: Admitted): string {
+  const reasons = [
+    [keptOut.animal, 'animal foods (allow eggs or dairy to use them)'],
+    [keptOut.allergen, 'foods with an allergen that is to be left out'],
+    [keptOut.heldBack, 'foods that are held back'],
+    [keptOut.noPlace, 'foods that bring no protein to speak of'],
+    [keptOut.tooLittle, 'foods of which there is less than a portion for each serving'],
+  ].flatMap(([count, what]) => (count === 0 ? [] : [`${count} ${what}`]))
+  return `Nothing on the shelf can be paired: it holds ${reasons.join(', ')}.`
+}
+
+function nearest(problem: PairingProblem, { forced, open }: Admitted, window: Window): PairingAnswer {
+  const reach = nearestPlate(forced, open, problem.foodsAtMost, window)
+  const reason = reasonFor(reach, problem)
+  if (reach.proposal === null) return unanswered(reason)
+  const proteinG = reach.proposal.set.reduce(
+    (sum, food, j) => sum + food.protein * reach.proposal!.grams[j]!,
+    0,
+  )
+  const slack = { ...window, leastProteinG: proteinG * 0.97, mostProteinG: proteinG * 1.001 }
+  const rounded = practicalGrams(reach.proposal.set, reach.proposal.grams, slack)
+  const proposal = { ...reach.proposal, grams: Float64Array.from(rounded.grams) }
+  return { reached: false, pairings: [pairingOf(proposal, problem)], reason }
+}
+
+function reasonFor({ proteinG, tooLittle, proposal }: Reach, problem: PairingProblem): string {
+  const target = `${figure(problem.targetG)} g protein a serving`
+  if (!tooLittle) {
+    return `${target} cannot be kept to: the least portions of what must be in already bring ${figure(proteinG)} g. Raise the target, or take a mark off.`
+  }
+  const ceilings = [
+    ...(problem.energyAtMostKcal === null ? [] : [`${figure(problem.energyAtMostKcal)} kcal`]),
+    ...(problem.massAtMostG === null ? [] : [`${figure(problem.massAtMostG)} g`]),
+  ]
+  const within = ceilings.length === 0 ? '' : ` and at most ${ceilings.join(' and ')}`
+  const limits = `with at most ${problem.foodsAtMost} ${problem.foodsAtMost === 1 ? 'food' : 'foods'}${within}`
+  if (proposal === null) return `${target} cannot be reached: nothing fits ${limits}.`
+  const servings = problem.servings === 1 ? '' : ` shared among ${problem.servings} servings`
+  return `${target} cannot be reached from this shelf${servings}: ${limits}, in portions that a person eats, it gives ${figure(proteinG)} g at most. Put more protein foods on the shelf, allow more foods, or lower the target.`
+}
+
+const figure = (value: number): string => String(Number(value.toFixed(1)))

@@ -1,0 +1,150 @@
+import type { AllergenId } from '../foods/allergens.ts'
+import type { Food } from '../foods/food.ts'
+import type { Pattern } from '../nutrition/pattern.ts'
+import type { Portion } from '../nutrition/protein-source.ts'
+import { barred, servingLimits } from './admit.ts'
+import { type Candidate, candidateOf, qualityOf } from './candidate.ts'
+import type { LiftOption, PairingProblem, ShelfFood } from './problem.ts'
+
+/** What a lift may use: the shelf with its marks, the foods that could be bought, and what is to be left out. */
+export interface LiftContext {
+  pattern: Pattern
+  shelf: readonly ShelfFood[]
+  servings: number
+  without: readonly AllergenId[]
+  allow: { eggs: boolean; dairy: boolean }
+  market: readonly Food[]
+}
+
+/** A change that raises the DIAAS by less than this (per cent) is not worth a cook's while. */
+const WORTH = 0.5
+/** A food of the market is only named where it beats the shelf by this (per cent). */
+const WORTH_BUYING = 2
+/** A lift adds a little: at most this share of a usual portion, or of what is on the plate. */
+const LITTLE = 0.75
+
+export function liftContext(problem: PairingProblem): LiftContext {
+  return {
+    pattern: problem.basis.pattern,
+    shelf: problem.shelf,
+    servings: problem.servings,
+    without: problem.without,
+    allow: problem.allow,
+    market: problem.market ?? [],
+  }
+}
+
+/**
+ * The best single changes to a plate, at most three and of different kinds: more (or less) of a food that is on it, a
+ * little of another from the shelf, and a food that is not on the shelf. Each in practical grams, the greatest first.
+ * Empty where no change is worth it, or where nothing is short (DIAAS 100 or more).
+ */
+export function liftOptions(portions: readonly Portion<Food>[], context: LiftContext): LiftOption[] {
+  const plate = portions.map(({ food, grams }) =>
+    candidateOf(food, context.pattern, { leastG: grams, mostG: grams }),
+  )
+  const grams = portions.map(portion => portion.grams)
+  const now = qualityOf(plate, grams)
+  if (plate.length === 0 || now >= 1) return []
+  const better = (options: (LiftOption | null)[]): LiftOption | null =>
+    options.reduce<LiftOption | null>(
+      (best, option) => (option !== null && (best === null || option.diaas > best.diaas) ? option : best),
+      null,
+    )
+  const worthwhile = (option: LiftOption | null): LiftOption | null =>
+    option !== null && option.diaas >= 100 * now + WORTH ? option : null
+
+  const onPlate = new Set(portions.map(({ food }) => food.id))
+  const kins = new Set(portions.map(({ food }) => food.kin))
+  const changed = worthwhile(better(plate.map((_, at) => changeOf(plate, grams, at, context))))
+  const mayAdd = (food: Food) =>
+    food.place === 'protein' &&
+    food.per100g.proteinG > 0 &&
+    !kins.has(food.kin) &&
+    barred(food, context) === null
+  const fromShelf = worthwhile(
+    better(
+      context.shelf
+        .filter(({ food, mark }) => mark !== 'hold-back' && !onPlate.has(food.id) && mayAdd(food))
+        .map(item => additionOf(plate, grams, item, context, true)),
+    ),
+  )
+  const shelfKins = new Set(context.shelf.map(({ food }) => food.kin))
+  const bought = worthwhile(
+    better(
+      context.market
+        .filter(food => !shelfKins.has(food.kin) && mayAdd(food))
+        .map(food => additionOf(plate, grams, { food, onHandG: null, mark: '' }, context, false)),
+    ),
+  )
+  return [changed, fromShelf, bought]
+    .filter(option => option !== null)
+    .sort((a, b) => Math.min(100, b.diaas) - Math.min(100, a.diaas) || Number(b.onShelf) - Number(a.onShelf))
+}
+
+/** The one change to name beside a pairing: from the shelf where that helps, else (or where far better) from the table. */
+export function nextLift(portions: readonly Portion<Food>[], context: LiftContext): LiftOption | null {
+  const options = liftOptions(portions, context)
+  const home = options.find(({ onShelf }) => onShelf) ?? null
+  const bought = options.find(({ onShelf }) => !onShelf) ?? null
+  if (home === null) return bought
+  if (bought === null) return home
+  const gain = Math.min(100, bought.diaas) - Math.min(100, home.diaas)
+  return gain > WORTH_BUYING && home.diaas < 75 && bought.diaas >= 75 ? bought : home
+}
+
+/** The best practical change to the grams of one food of the plate, up or down. */
+function changeOf(
+  plate: readonly Candidate[],
+  grams: readonly number[],
+  at: number,
+  context: LiftContext,
+): LiftOption | null {
+  const { food } = plate[at]!
+  const here = grams[at]!
+  const item = context.shelf.find(entry => entry.food.id === food.id)
+  const most = item === undefined ? food.portionG.most : servingLimits(item, context.servings).mostG
+  const least = Math.max(food.portionG.least, here * (1 - LITTLE / 2))
+  const steps: number[] = []
+  for (let g = food.stepG; here + g <= most && g <= here * LITTLE; g += food.stepG) steps.push(g)
+  for (let g = -food.stepG; here + g >= least; g -= food.stepG) steps.push(g)
+  return bestStep(steps, food, true, step =>
+    qualityOf(
+      plate,
+      grams.map((g, j) => (j === at ? g + step : g)),
+    ),
+  )
+}
+
+/** The best practical amount of a food that is not on the plate yet. */
+function additionOf(
+  plate: readonly Candidate[],
+  grams: readonly number[],
+  item: ShelfFood,
+  context: LiftContext,
+  onShelf: boolean,
+): LiftOption | null {
+  const { food } = item
+  const { leastG, mostG } = servingLimits(item, context.servings)
+  const most = Math.min(mostG, Math.max(leastG, food.portionG.usual * LITTLE))
+  const added = [...plate, candidateOf(food, context.pattern, { leastG, mostG })]
+  const steps: number[] = []
+  for (let g = Math.ceil(leastG / food.stepG) * food.stepG; g <= most; g += food.stepG) steps.push(g)
+  return bestStep(steps, food, onShelf, step => qualityOf(added, [...grams, step]))
+}
+
+/** The step with the greatest truncated score; of those within a tenth of a point of it, the smallest. */
+function bestStep(
+  steps: readonly number[],
+  food: Food,
+  onShelf: boolean,
+  qualityAt: (step: number) => number,
+): LiftOption | null {
+  const tried = steps.map(deltaG => ({ food, deltaG, diaas: 100 * qualityAt(deltaG), onShelf }))
+  const best = Math.max(...tried.map(({ diaas }) => Math.min(100, diaas)))
+  const near = tried.filter(({ diaas }) => Math.min(100, diaas) >= best - 0.1)
+  return near.reduce<LiftOption | null>(
+    (least, option) => (least === null || Math.abs(option.deltaG) < Math.abs(least.deltaG) ? option : least),
+    null,
+  )
+}
