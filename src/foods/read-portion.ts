@@ -126,7 +126,7 @@ function part(plain: string): Parted {
       const amountText = text.slice(0, leading.end).replace(/\s*\S+\s*$/, '')
       return { amount, amountText, foodText: unit.name }
     }
-    return { amount: leading, amountText: text.slice(0, leading.end).trim(), foodText }
+    return withLabel({ amount: leading, amountText: text.slice(0, leading.end).trim(), foodText })
   }
   let inside: Parted | null = null
   for (const match of text.matchAll(/[\s,:;(=]+(?:-|x\s+(?=\d))?\s*/gi)) {
@@ -147,6 +147,15 @@ function part(plain: string): Parted {
     }
   }
   return inside ?? { amount: null, amountText: '', foodText: cleaned(text) }
+}
+
+/** `1 can of chickpeas (400 g)`: the label in brackets at the end belongs to the amount. */
+function withLabel(parted: Parted): Parted {
+  const match = /^(.*\S)\s*(\([^()]*\))$/.exec(parted.foodText)
+  if (match === null) return parted
+  const amountText = `${parted.amountText} ${match[2]}`
+  const amount = scanAmount(amountText)
+  return amount?.end === amountText.length ? { amount, amountText, foodText: match[1]! } : parted
 }
 
 /** `handful of almonds`, `heaped tbsp tahini`: one of them, though no "a" stands before it. */
@@ -302,7 +311,7 @@ function doubtful(said: string, amount: Scanned, doubt: Doubt, food: Food): Refu
     case 'comma': {
       const size = amount.terms[0]!
       if (size.eachG !== null) {
-        const total = [doubt.high, doubt.high * size.count].map(grams => inGrams(grams, food))
+        const total = [doubt.low, doubt.high].map(grams => inGrams(grams, food))
         return refused(`"${said}" may mean the weight of each or of all; give the whole weight`, total)
       }
       return refused(`"${said}" may mean ${doubt.low} or ${doubt.high}; write it without the comma`, [

@@ -40,6 +40,7 @@ export function keyboardSigns(text: string): string {
   return text
     .replace(/(\d)\s*(?=[¼-¾⅐-⅞])/g, '$1 ')
     .replace(FRACTION_SIGNS, sign => FRACTIONS.get(sign)!)
+    .normalize('NFKC')
     .replace(/⁄/g, '/')
     .replace(/[−‐‑‒–—]/g, '-')
     .replace(/[×✕]/g, ' x ')
@@ -91,6 +92,11 @@ const UNIT_WORD = /\s*-?\s*([a-z]+)(?![\p{L}\p{N}'])\.?/iuy
 const OPEN = /\s*\(\s*/y
 const CLOSE = /\s*(?:each|per can|per tin)?\s*\)/iy
 const EACH = /\s*each\b/iy
+
+/** What is sold by the weight on its label. */
+const CONTAINERS = new Set(
+  'can jar bottle carton package bag box tub pot block bar loaf bunch head'.split(' '),
+)
 
 /**
  * Reads an amount that begins at `start` of a text (after `keyboardSigns`), or null where none begins there.
@@ -231,12 +237,31 @@ export function scanAmount(text: string, start = 0): Scanned | null {
       const eachG = mass()
       if (eachG === null || (bracketed && eat(CLOSE) === null)) return null
       const container = unit()
-      return container?.kind === 'piece' ? { eachG, unit: container } : null
+      return container?.kind === 'piece' && CONTAINERS.has(container.name) ? { eachG, unit: container } : null
+    })
+  }
+
+  /** `(400 g)` after a measure: of each where it is a container, of all where it is a volume; `(1 cup)` after a mass */
+  function bracketed(counted: Unit, count: number): { grams: number; isDoubtful: boolean } | null {
+    return attempt(() => {
+      if (eat(OPEN) === null) return null
+      if (counted.kind === 'mass') {
+        if (number() === null || unit() === null || eat(CLOSE) === null) return null
+        return { grams: counted.grams, isDoubtful: false }
+      }
+      const grams = mass()
+      const isEach = eat(EACH) !== null
+      if (grams === null || eat(CLOSE) === null) return null
+      if (counted.kind === 'volume') return { grams: count > 0 ? grams / count : grams, isDoubtful: false }
+      // two cans (400 g): of each or of both?
+      return { grams, isDoubtful: count > 1 && !isEach }
     })
   }
 
   function term(): { term: Term; doubt: Doubt | null } | null {
     return attempt(() => {
+      const one = labelled()
+      if (one !== null) return { term: { count: 1, ...one, sizes: [] }, doubt: null }
       const read = quantity()
       if (read === null) return null
       let { value: count, doubt } = read
@@ -272,19 +297,9 @@ export function scanAmount(text: string, start = 0): Scanned | null {
         doubt ??= { kind: 'heaped', word: heaped[1]!.toLowerCase() }
       }
       const counted = unit()
-      let eachG: number | null = null
-      if (counted?.kind === 'piece') {
-        eachG = attempt(() => {
-          if (eat(OPEN) === null) return null
-          const each = mass()
-          const isEach = eat(EACH) !== null
-          if (each === null || eat(CLOSE) === null) return null
-          // two cans (400 g): of each or of both?
-          if (!isEach && count !== 1) doubt ??= { kind: 'comma', low: each / count, high: each }
-          return each
-        })
-      }
-      return { term: { count, unit: counted, eachG, sizes }, doubt }
+      const each = counted === null ? null : bracketed(counted, count)
+      if (each?.isDoubtful) doubt ??= { kind: 'comma', low: each.grams, high: each.grams * count }
+      return { term: { count, unit: counted, eachG: each?.grams ?? null, sizes }, doubt }
     })
   }
 
