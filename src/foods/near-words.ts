@@ -1,4 +1,4 @@
-import Fuse from 'fuse.js'
+import Fuse from 'fuse.js/basic'
 import { editDistance } from './edit-distance.ts'
 
 /** A known word that a mistyped one may stand for. */
