@@ -32,12 +32,18 @@ export type LabelReading =
       ok: true
       /** the foods of the ingredients that are known, in the label's order */
       foods: Food[]
-      /** words that name no food of the table: taken to bring no protein */
+      /** words taken to bring no protein: water, salt and the like, and what no food is called */
       leftOut: string[]
+      /** foods taken for words that may mean others too; to be shown */
+      assumed: Food[]
     }
   | { ok: false; problem: string }
 
 const INGREDIENTS_AT_MOST = 40
+
+/** What labels list that brings no protein to speak of. */
+const WITHOUT_PROTEIN =
+  /^(?:(?:sea|table|iodi[sz]ed|rock) )?(?:water|salt|sugar|.*\b(?:oils?|vinegar|syrup|juice|starch|flavou?rings?|vitamins?|acid|emulsifiers?|stabili[sz]ers?|thickeners?|sweeteners?|colou?rs?|colou?rings?|raising agents?|preservatives?|antioxidants?|spices?|herbs?)|e ?\d{3}[a-z]?)$/i
 
 /**
  * The foods of a label's ingredients in descending order of mass. What the table does not know (salt, flavourings,
@@ -56,16 +62,27 @@ export function readLabel(text: string, resolve: ResolveFood): LabelReading {
       problem: `${words.length} ingredients are too many; give the first ${INGREDIENTS_AT_MOST}`,
     }
   const foods: Food[] = []
+  const assumed: Food[] = []
   const leftOut: string[] = []
   for (const word of words) {
+    if (WITHOUT_PROTEIN.test(word)) {
+      leftOut.push(word)
+      continue
+    }
     const found = resolve(word)
-    if (!found.ok) leftOut.push(word)
-    else if (!foods.some(({ id }) => id === found.food.id)) foods.push(found.food)
+    if (!found.ok) {
+      // A word that nearly names a food may be one that brings protein: leaving it out would narrow the range.
+      if (found.unknown === false) return { ok: false, problem: plainText(found.problem) }
+      leftOut.push(word)
+      continue
+    }
+    if (found.assumed) assumed.push(found.food)
+    if (!foods.some(({ id }) => id === found.food.id)) foods.push(found.food)
   }
   if (!foods.some(({ per100g }) => per100g.crudeProteinG > 0))
     return {
       ok: false,
       problem: `no ingredient that brings protein is known: ${leftOut.slice(0, 5).join(', ').slice(0, 100)}`,
     }
-  return { ok: true, foods, leftOut }
+  return { ok: true, foods, leftOut, assumed }
 }

@@ -2,8 +2,13 @@ import type { Food } from './food.ts'
 import type { ProteinPart } from './own-food.ts'
 import { plainText } from './plain-text.ts'
 
-/** Finds the food that some words name (the search's `foodByWords`, with its finder). */
-export type ResolveFood = (words: string) => { ok: true; food: Food } | { ok: false; problem: string }
+/**
+ * Finds the food that some words name (`sourceByWords` with the search's finder). `assumed`: the words may mean
+ * others too; `unknown`: no food is called so at all, rather than too many or not in that state.
+ */
+export type ResolveFood = (
+  words: string,
+) => { ok: true; food: Food; assumed?: boolean } | { ok: false; problem: string; unknown?: boolean }
 
 export type PartsReading =
   | {
@@ -12,6 +17,8 @@ export type PartsReading =
       /** were all shares said? a single part needs none */
       sharesKnown: boolean
       foods: Food[]
+      /** foods taken for words that may mean others too; to be shown */
+      assumed: Food[]
     }
   | { ok: false; problem: string }
 
@@ -38,7 +45,7 @@ export function readParts(text: string, resolve: ResolveFood, { concentrated = f
   if (pieces.length === 0) return refused('say what its protein is made of, such as "80 % pea, 20 % rice"')
   if (pieces.length > PARTS_AT_MOST)
     return refused(`${pieces.length} parts are too many; give the ${PARTS_AT_MOST} largest`)
-  const read: { food: Food; share: number | null }[] = []
+  const read: { food: Food; share: number | null; assumed: boolean }[] = []
   for (const piece of pieces) {
     const part =
       /^(?:(?<before>\d+(?:\.\d+)?) ?(?:%|per ?cent)\s*(?:of )?)?(?<words>.*?)(?:\s*\(?(?<after>\d+(?:\.\d+)?) ?(?:%|per ?cent)\)?)?$/i.exec(
@@ -54,7 +61,7 @@ export function readParts(text: string, resolve: ResolveFood, { concentrated = f
     if (!found.ok) return refused(`"${words.slice(0, 40)}": ${found.problem}`)
     if (found.food.id.startsWith('own-'))
       return refused(`"${words.slice(0, 40)}" is an own food; name foods of the table`)
-    read.push({ food: found.food, share })
+    read.push({ food: found.food, share, assumed: found.assumed ?? false })
   }
   return shared(read)
 }
@@ -67,7 +74,7 @@ function resolved(words: string, resolve: ResolveFood, concentrated: boolean): R
   return resolve(words)
 }
 
-function shared(read: { food: Food; share: number | null }[]): PartsReading {
+function shared(read: { food: Food; share: number | null; assumed: boolean }[]): PartsReading {
   const said = read.reduce((total, { share }) => total + (share ?? 0), 0)
   const unsaid = read.filter(({ share }) => share === null).length
   const left = 1 - said
@@ -86,6 +93,7 @@ function shared(read: { food: Food; share: number | null }[]): PartsReading {
     parts: parts.map(({ food, share }) => ({ food: food.id, share })),
     sharesKnown: unsaid <= 1 && (read.length === 1 || unsaid < read.length),
     foods: parts.map(({ food }) => food),
+    assumed: read.flatMap(({ food, assumed }) => (assumed ? [food] : [])),
   }
 }
 
