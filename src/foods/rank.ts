@@ -36,7 +36,7 @@ type Near = (typed: string) => readonly NearWord[]
 /** A word found elsewhere among the food's names than in the one looked at. */
 const ELSEWHERE = 0.75
 /** A name that belongs to the food's kin in another state. */
-const OF_KIN = 0.97
+const OF_KIN = 0.9
 const MISSING_WEAK = 0.15
 const STATE_WEIGHT = 0.5
 

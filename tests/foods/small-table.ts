@@ -135,6 +135,7 @@ export const SMALL_TABLE: readonly Food[] = [
     kin: 'chickpea',
     role: 'pulse',
     state: 'boiled',
+    aliases: ['garbanzo beans'],
     measures: { '1 cup': 164 },
   }),
   food({
