@@ -35,15 +35,20 @@ const STATE_MEANT: Readonly<Record<Role, readonly State[]>> = {
 }
 const LAST = 9
 
-/** 0 for the state that a cook means where none is said, more for others. */
+/** 0 for the state that a cook means where none is said, more for others; of a kin, that of its first answer. */
 export function stateRank(food: Food): number {
+  const place = placeOfState(food)
+  return place < LAST && food.firstFor.length > 0 ? 0 : place
+}
+
+function placeOfState(food: Food): number {
   const place = STATE_MEANT[food.role].indexOf(food.state)
   return place < 0 ? LAST : place
 }
 
 /** Is the state one that nobody means without saying so: flour of a pulse, sprouts? */
 export function isUnusualState(food: Food): boolean {
-  return stateRank(food) === LAST
+  return placeOfState(food) === LAST
 }
 
 /**

@@ -116,7 +116,8 @@ export function weighUnit(
     return { grams: by.grams * ratio, measure: nearest.measure, note: `from its ${by.unit!.name}` }
   }
   const dried = food.role === 'fruit' && (food.state === 'dried' || food.state === 'dry')
-  if (unit.name === 'handful' && (food.role === 'nut-seed' || dried) && food.state !== 'flour') {
+  const isSized = words.some(word => SIZES.includes(word) && !NEUTRAL.has(word))
+  if (unit.name === 'handful' && !isSized && (food.role === 'nut-seed' || dried) && food.state !== 'flour') {
     return { grams: HANDFUL_G, measure: 'handful', note: 'a handful taken as 30 g, common practice' }
   }
   return null
@@ -124,7 +125,7 @@ export function weighUnit(
 
 function weighLabelled(food: Food, unit: Unit, eachG: number): Weighed {
   const isCan = unit.name === 'can' || unit.name === 'jar'
-  if (isCan && food.state === 'canned' && food.role === 'pulse') {
+  if (isCan && food.state === 'canned' && wordsOf(food.name).includes('drained')) {
     return {
       grams: eachG * DRAINED_SHARE,
       measure: unit.name,
@@ -142,24 +143,35 @@ function largestFirst(measures: readonly ParsedMeasure[]): ParsedMeasure[] {
 
 /** The measure that the words name; without such words the bare one, or any if all weigh nearly the same. */
 function choose(measures: readonly ParsedMeasure[], words: readonly string[]): WeighedUnit {
-  if (measures.length === 0) return null
-  const answer = ({ grams, measure }: ParsedMeasure): Weighed => ({ grams, measure: measure.name, note: '' })
-  const sized = words.filter(word => SIZES.includes(word) && !NEUTRAL.has(word))
-  const fitting = measures.filter(({ qualifiers }) => {
+  const offered = measures.filter(measure => !isPacked(measure) || words.includes('packed'))
+  if (offered.length === 0) return measures.length === 0 ? null : { several: [...measures] }
+  const fitting = offered.filter(({ qualifiers }) => {
     const telling = qualifiers.filter(word => !NEUTRAL.has(word))
     return telling.length > 0 && telling.every(word => words.includes(word))
   })
-  if (fitting.length > 0) return answer(fitting[0]!)
-  const touched = measures.filter(({ qualifiers }) => qualifiers.some(word => words.includes(word)))
-  if (touched.length === 1) return answer(touched[0]!)
-  if (sized.length > 0) return { several: [...measures] }
-  const bare = measures.find(({ qualifiers }) => qualifiers.every(word => NEUTRAL.has(word)))
-  if (bare !== undefined) return answer(bare)
-  const grams = measures.map(measure => measure.grams)
-  if (Math.max(...grams) <= Math.min(...grams) * (1 + ALIKE)) return answer(measures[0]!)
-  const medium = measures.find(({ qualifiers }) => qualifiers.includes('medium'))
-  if (medium !== undefined) return { ...answer(medium), note: 'a medium one taken' }
-  return { several: [...measures] }
+  if (fitting.length > 0) return weighedBy(fitting[0]!)
+  const touched = offered.filter(({ qualifiers }) =>
+    qualifiers.some(word => !NEUTRAL.has(word) && words.includes(word)),
+  )
+  if (touched.length === 1) return weighedBy(touched[0]!)
+  // a size was said that the food is not known in
+  if (words.some(word => SIZES.includes(word) && !NEUTRAL.has(word))) return null
+  const bare = offered.find(({ qualifiers }) => qualifiers.every(word => NEUTRAL.has(word)))
+  if (bare !== undefined) return weighedBy(bare)
+  const grams = offered.map(measure => measure.grams)
+  if (Math.max(...grams) <= Math.min(...grams) * (1 + ALIKE)) return weighedBy(offered[0]!)
+  const medium = offered.find(({ qualifiers }) => qualifiers.includes('medium'))
+  if (medium !== undefined) return { ...weighedBy(medium), note: 'a medium one taken' }
+  return { several: offered }
+}
+
+function weighedBy({ grams, measure }: ParsedMeasure): Weighed {
+  return { grams, measure: measure.name, note: '' }
+}
+
+/** Pressed down is not how a cup is filled unless it is said. */
+function isPacked({ qualifiers }: ParsedMeasure): boolean {
+  return qualifiers.includes('packed') && !qualifiers.includes('not') && !qualifiers.includes('loosely')
 }
 
 /** Units that say nothing of one whole: `1 slice` of bread is not a bread. */
@@ -214,7 +226,12 @@ export function hasMeasure(food: Food, unitName: string): boolean {
 
 /** A food's measures in words: `1 cup (198 g), 1 tbsp (12 g)`. */
 export function measureList(food: Food): string {
-  return food.measures.map(({ name, grams }) => `${name} (${gramsText(grams)})`).join(', ')
+  return food.measures.map(({ name, grams }) => `${measureText(name)} (${gramsText(grams)})`).join(', ')
+}
+
+/** A measure's name without what its dataset left hanging. */
+export function measureText(name: string): string {
+  return name.replace(/[\s,]+$/, '')
 }
 
 /** Grams as people write them: whole from 10 up, else one decimal. */

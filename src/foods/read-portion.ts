@@ -1,5 +1,13 @@
 import type { Food } from './food.ts'
-import { gramsText, hasMeasure, measureList, weighOne, weighUnit } from './measures.ts'
+import {
+  gramsText,
+  hasMeasure,
+  measureList,
+  measureText,
+  type ParsedMeasure,
+  weighOne,
+  weighUnit,
+} from './measures.ts'
 import { plainText } from './plain-text.ts'
 import { type Doubt, keyboardSigns, type Scanned, scanAmount, type Term } from './scan-amount.ts'
 import { type Finder, nearestKinds, type Resolution, resolve, shown, whyNoFood } from './search.ts'
@@ -209,7 +217,7 @@ function weighTerms(terms: readonly Term[], food: Food, foodText: string) {
     grams += count * one.grams
     measure = one.measure
     const own = food.measures.find(({ name }) => name === one.measure)
-    if (own !== undefined) notes.push(`${own.name} = ${gramsText(own.grams)}`)
+    if (own !== undefined) notes.push(`${measureText(own.name)} = ${gramsText(own.grams)}`)
     if (one.note !== '') notes.push(one.note)
   }
   const weighed: WeighedTerms = { grams, measure, notes }
@@ -345,15 +353,16 @@ function noMeasure(
   said: string,
   amount: Scanned,
   food: Food,
-  several: readonly { measure: { name: string } }[] | null,
+  several: readonly ParsedMeasure[] | null,
 ): Refused {
   const term = amount.terms[0]!
   const unit = term.unit
   if (several !== null) {
-    const names = several.map(({ measure }) => measure.name).join(' or ')
+    const names = several.map(({ measure }) => measureText(measure.name)).join(' or ')
+    const readings = several.map(({ grams }) => inGrams(Math.round(term.count * grams * 10) / 10, food))
     return refused(
       `"${said}" may be any of several measures of ${food.name}: ${names}; give grams`,
-      usualReadings(food),
+      readings.filter(({ grams }) => grams !== null && grams >= LEAST_G && grams <= MOST_G),
     )
   }
   const meant = READINGS_OF.get(unit?.name ?? '')

@@ -57,7 +57,7 @@ describe('the order of hits', () => {
     ['potatos boild', 'potatoes-boiled'],
     ['len', 'lentils-brown-boiled'],
     ['chickp', 'chickpeas-boiled'],
-    ['red lent', 'lentils-red-boiled'],
+    ['red lent', 'lentils-red-dry'],
     // words of praise and preparation cost nothing
     ['a bunch of fresh organic spinach, chopped', 'spinach-raw'],
     ['lentils-red-dry', 'lentils-red-dry'],

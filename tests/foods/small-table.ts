@@ -173,6 +173,14 @@ export const SMALL_TABLE: readonly Food[] = [
     measures: { '1 cup': 169 },
   }),
   food({
+    id: 'kidney-beans-canned',
+    name: 'Kidney beans, canned, with their liquid',
+    kin: 'kidney-bean',
+    role: 'pulse',
+    state: 'canned',
+    measures: { '1 cup': 256 },
+  }),
+  food({
     id: 'kidney-beans-boiled',
     name: 'Kidney beans, boiled',
     kin: 'kidney-bean',
