@@ -5,7 +5,7 @@ import { STAVE_NAMES, STAVES, type Stave } from '../nutrition/amino-acids.ts'
 import type { PlateScore } from '../nutrition/plate-score.ts'
 import type { Portion } from '../nutrition/protein-source.ts'
 import { aboutMass, formatAmount, type Units } from './amounts.ts'
-import { type Caution, cautionsFor, STANDING_NOTE } from './cautions.ts'
+import { type Caution, cautionsFor, FULL_NOTE } from './cautions.ts'
 import { stepBack } from './conditions.ts'
 import type { CookingMethod, KitchenFile, StorageText } from './kitchen-file.ts'
 import { loadKitchen } from './load.ts'
@@ -115,7 +115,7 @@ export function cardOf(request: CardRequest, kitchen: KitchenFile = loadKitchen(
     cautions: cautionsFor(foods, { conditions, boxed: request.boxed ?? false, portions }, kitchen.cautions),
     notes: [...back.notes, ...(request.b12 ? [{ id: 'vitamin-b12', ...request.b12 }] : [])],
     storage: storageOf(foods, kitchen),
-    standingNote: STANDING_NOTE,
+    standingNote: FULL_NOTE,
   }
 }
 

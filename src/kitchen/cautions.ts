@@ -31,6 +31,10 @@ export interface CautionContext {
 export const STANDING_NOTE =
   'For information, for healthy people over three; not medical advice. Local food-safety rules come first.'
 
+/** The longer form, for cards and help. */
+export const FULL_NOTE =
+  'This compares amino acids in foods with a published pattern: arithmetic for healthy people over three, not medical advice. If you are pregnant, under 18, have kidney or liver disease, phenylketonuria or another metabolic disorder, an eating disorder now or before, or take warfarin or an MAO inhibitor, ask your doctor or a registered dietitian first. Local food-safety rules come first.'
+
 /** A serving with more sodium than this (mg) is flagged: two fifths of the day's 2000 mg (WHO 2012). Our judgement. */
 const SODIUM_FLAG_MG = 800
 /** A serving with more fibre than this (g) is flagged; a day's adequate intake is about 25 g (EFSA 2010). */

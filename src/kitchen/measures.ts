@@ -15,6 +15,9 @@ const EQUAL_WITHIN = 0.04
 /** A measure further off than this is not offered. */
 const OFFERED_WITHIN = 0.15
 
+/** More pieces than this are rather filled into a cup. */
+const COUNTED_GLADLY = 8
+
 const CUP_PARTS = [0, 1 / 4, 1 / 3, 1 / 2, 2 / 3, 3 / 4] as const
 const SPOON_PARTS = [0, 1 / 2] as const
 const PIECE_PARTS = [0, 1 / 2] as const
@@ -27,15 +30,20 @@ const PIECE_PARTS = [0, 1 / 2] as const
  */
 export function measureText(food: Pick<Food, 'measures' | 'state'>, grams: number): string | null {
   if (!(grams > 0)) return null
-  const cupG = cupOf(food)
+  const cup = filledMeasure(food)
   const options: Option[] = []
-  if (cupG !== null) {
-    options.push(...cupOptions(grams, cupG), ...spoonOptions(grams, cupG))
+  if (cup !== null) {
+    for (const option of [...cupOptions(grams, cup.cupG), ...spoonOptions(grams, cup.cupG)])
+      options.push({ ...option, text: option.text + cup.form })
   }
   for (const unit of piecesOf(food)) {
     const count = roundToOneOf(grams / unit.grams, PIECE_PARTS)
     if (count.value > 0 && count.value <= 24) {
-      options.push({ text: pieceText(count, unit.name), grams: count.value * unit.grams, effort: 0.5 })
+      options.push({
+        text: pieceText(count, unit.name),
+        grams: count.value * unit.grams,
+        effort: count.value <= COUNTED_GLADLY ? 0.5 : 1.5,
+      })
     }
   }
   const offered = options
@@ -116,7 +124,8 @@ function pieceText(count: Fraction, name: string): string {
 function split(name: string): { count: number; unit: string } | null {
   const match = /^\s*(\d+(?:\.\d+)?|\d+\s*\/\s*\d+|[½¼¾⅓⅔])\s+(.+?)\s*$/.exec(name)
   if (match === null) return null
-  const [, amount = '', unit = ''] = match
+  const [, amount = '', said = ''] = match
+  const unit = said.replace(/[,;: ]+$/, '')
   const signs: Record<string, number> = { '½': 1 / 2, '¼': 1 / 4, '¾': 3 / 4, '⅓': 1 / 3, '⅔': 2 / 3 }
   const [over, under] = amount.split('/').map(Number)
   const count = signs[amount] ?? (under === undefined ? over! : over! / under)
@@ -125,15 +134,25 @@ function split(name: string): { count: number; unit: string } | null {
 
 /** Grams of a cup of the food: of a cup measure, else of spoons; the first that the food lists. */
 export function cupOf(food: Pick<Food, 'measures'>): number | null {
-  for (const [pattern, toCup] of [
-    [/^cups?\b/, 1],
-    [/^(tbsp|tablespoons?)\b/, TBSP_IN_CUP],
-    [/^(tsp|teaspoons?)\b/, TBSP_IN_CUP * TSP_IN_TBSP],
-  ] as const) {
-    for (const { name, grams } of food.measures) {
-      const parts = split(name.toLowerCase())
-      if (parts !== null && pattern.test(parts.unit)) return (grams / parts.count) * toCup
-    }
+  return filledMeasure(food)?.cupG ?? null
+}
+
+const FILLED = [
+  [/^cups?\b/, 1],
+  [/^(tbsp|tablespoons?)\b/, TBSP_IN_CUP],
+  [/^(tsp|teaspoons?)\b/, TBSP_IN_CUP * TSP_IN_TBSP],
+] as const
+
+/** The cup, and the form it is filled in (`, whole`) where the food fills it in several. */
+function filledMeasure(food: Pick<Food, 'measures'>): { cupG: number; form: string } | null {
+  for (const [pattern, toCup] of FILLED) {
+    const found = food.measures.flatMap(({ name, grams }) => {
+      const parts = split(name)
+      if (parts === null || !pattern.test(parts.unit.toLowerCase())) return []
+      return [{ cupG: (grams / parts.count) * toCup, form: /,.*/.exec(parts.unit)?.[0] ?? '' }]
+    })
+    const [first] = found
+    if (first !== undefined) return { cupG: first.cupG, form: found.length > 1 ? first.form : '' }
   }
   return null
 }

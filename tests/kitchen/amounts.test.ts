@@ -102,6 +102,16 @@ describe('amounts as the cook has the food', () => {
     expect(cupOf(aFood({ measures: [measure('a cupful', 400), measure('0 cup', 10)] }))).toBeNull()
   })
 
+  test('where a cup can be filled in several forms, the form is said', () => {
+    const nuts = aFood({
+      id: 'nuts',
+      measures: [measure('1 cup, whole', 140), measure('1 cup, chopped', 110), measure('1 kernel,', 5)],
+    })
+    expect(measureText(nuts, 70)).toBe('1/2 cup, whole')
+    expect(measureText(nuts, 10)).toBe('2 kernels')
+    expect(measureText(aFood({ measures: [measure('1 cup, cooked', 160)] }), 80)).toBe('1/2 cup')
+  })
+
   test('small amounts come in spoons', () => {
     const sesame = aFood({ id: 's', state: 'raw', stepG: 1, measures: [measure('1 tbsp', 9)] })
     expect(formatAmount(sesame, 9, 'metric', [])).toBe('9 g = 1 tbsp')

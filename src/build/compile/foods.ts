@@ -3,6 +3,7 @@ import type { TableFile } from '../../foods/table.ts'
 import { AMINO_ACIDS, profileOf } from '../../nutrition/amino-acids.ts'
 import { DIGESTIBILITY_TIERS } from '../../nutrition/protein-source.ts'
 import { checkAliases, withLocalNames } from './aliases.ts'
+import { withCare } from './care.ts'
 import { findingsOf, RULE_NAMES } from './checks.ts'
 import { compileCoefficients } from './coefficients.ts'
 import { resolveComposition } from './compositions.ts'
@@ -32,6 +33,8 @@ export interface TableInputs {
   phytate: Row[]
   exceptions: Row[]
   localNames: Row[]
+  /** what goes by the plant and not by the row; none where a test gives none */
+  care?: Row[]
 }
 
 /** Four significant digits: finer than any figure here is known. */
@@ -150,7 +153,7 @@ export function compileTable(inputs: TableInputs): { table: TableFile; problems:
     sources: [...sourceRows.values()]
       .filter(({ text }) => cited.has(text.id!))
       .map(({ text }) => ({ id: text.id!, citation: text.citation ?? '', licence: text.licence ?? '' })),
-    foods: named.sort((a, b) => (a.id < b.id ? -1 : 1)),
+    foods: withCare(named, inputs.care ?? [], problems).sort((a, b) => (a.id < b.id ? -1 : 1)),
   }
   return { table, problems: problems.lines }
 }

@@ -44,5 +44,6 @@ export function readInputs(): TableInputs {
     phytate: curation('phytate'),
     exceptions: curation('exceptions'),
     localNames: curation('local-names'),
+    care: curation('care'),
   }
 }

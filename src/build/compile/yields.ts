@@ -14,8 +14,16 @@ const ROLES: readonly Food['role'][] = ['pulse', 'soy', 'grain', 'mushroom']
  * the water balance of the table's own dry and cooked rows, else the curated figure of the whole class.
  */
 export function compileYields(foods: readonly Food[], rows: readonly Row[]): FoodYield[] {
-  const dry = foods.filter(food => DRY.includes(food.state))
-  const cooked = foods.filter(food => COOKED.includes(food.state))
+  const powderKins = new Set(foods.filter(({ state }) => state === 'powder').map(({ kin }) => kin))
+  // What is made of its own powder and water (seitan of wheat gluten) counts as cooked.
+  const cooked = foods.filter(
+    food => COOKED.includes(food.state) || (food.state === 'product' && powderKins.has(food.kin)),
+  )
+  const cookedKins = new Set(cooked.map(({ kin }) => kin))
+  // A meal that the table holds cooked too is boiled like a grain: polenta.
+  const dry = foods.filter(
+    food => DRY.includes(food.state) || (food.state === 'flour' && cookedKins.has(food.kin)),
+  )
   const yields: { found: FoodYield; likeness: number }[] = []
   for (const from of dry) {
     const to = likest(from, cooked)
