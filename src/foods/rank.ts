@@ -18,8 +18,8 @@ export interface Candidate {
   inState: boolean
   /** was a state asked for? */
   stateAsked: boolean
-  /** the least certain word: 1 as written, 0.8-1 begun, below 0.8 taken for a typing mistake */
-  surety: number
+  /** is no word so short or so mistyped that it may well be another? */
+  sure: boolean
   /** do the words, but for the state, make up a bare word for which this food or its kin is the first answer? */
   first: boolean
   /** do the words make up a name or alias of the food, nothing left over on either side? */
@@ -33,6 +33,8 @@ interface Lookup {
 
 type Near = (typed: string) => readonly NearWord[]
 
+/** Words only begun are this sure at least; mistyped ones are below it. */
+const BEGUN = 0.6
 /** A word found elsewhere among the food's names than in the one looked at. */
 const ELSEWHERE = 0.75
 /** A name that belongs to the food's kin in another state. */
@@ -87,7 +89,9 @@ function lookUp(index: FoodIndex, word: QueryWord, isLast: boolean, near: Near, 
   if (isLast || stem.length >= 4) {
     for (const longer of wordsBeginning(index, stem)) {
       const share = stem.length / longer.length
-      lookups.push({ word: longer, quality: (isLast && !isThere ? 0.82 : 0.72) + 0.16 * share })
+      // a whole word goes before one that it merely begins
+      const least = isThere ? BEGUN : isLast ? 0.82 : 0.72
+      lookups.push({ word: longer, quality: least + 0.16 * share })
     }
   }
   if (lookups.length === 0 || (mendAll && !isThere)) {
@@ -172,7 +176,7 @@ function weigh(
 ): Candidate {
   let weight = 0
   let sum = 0
-  let surety = 1
+  let sure = true
   let whole = true
   let inState = true
   let stateAsked = false
@@ -198,13 +202,14 @@ function weigh(
     weight += 1
     sum += quality
     if (quality === 0) whole = false
-    else surety = Math.min(surety, Math.max(here, kinRow[i]!))
+    const found = Math.max(here, kinRow[i]!)
+    if (found < leastSure(word.stem.length)) sure = false
   }
   const asked = weight === 0 ? 0 : sum / weight
   const exact = asked > 0.97 && covered.share > 0.97
   let text = 0.6 * asked + 0.3 * covered.share + 0.06 * covered.head
-  const first = entry.kind === 'firstFor' && covered.share > 0.8 && whole && allHere(words, row)
-  if (first) text += (isOwner ? 0.45 : 0.38) * covered.share
+  const first = entry.kind === 'firstFor' && covered.share > 0.8 * asked && whole && allHere(words, row)
+  if (first) text += (isOwner ? 0.45 : 0.38) * covered.share * asked ** 2
   else if (exact) text += entry.kind === 'name' ? 0.12 : 0.1
   if (!isOwner) text *= OF_KIN
   if (!whole) text *= 0.6
@@ -212,7 +217,17 @@ function weigh(
   const named = isOwner && (first || (exact && isUnusualState(food)))
   const state = stateAsked ? stateGain : named ? 0 : -0.015 * stateRank(food)
   const score = Math.max(0, text + state + everydayness(food))
-  return { food, score, text, whole, inState, stateAsked, surety, first: first && surety >= 0.8, exact }
+  return { food, score, text, whole, inState, stateAsked, sure, first, exact }
+}
+
+/**
+ * How surely a word of so many letters must be found to be taken for what was meant: begun, with three letters or
+ * more; mistyped, with one letter wrong in five, two in six and more.
+ */
+function leastSure(length: number): number {
+  if (length < 3) return 1
+  if (length < 5) return BEGUN
+  return length === 5 ? 0.455 : 0.355
 }
 
 /** Does the entry itself answer every word that is no state? A bare word must not gain by what stands elsewhere. */

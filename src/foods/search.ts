@@ -3,7 +3,6 @@ import { type FoodIndex, indexFoods } from './food-index.ts'
 import { markedRanges } from './marked-ranges.ts'
 import { createNearWords } from './near-words.ts'
 import { plainText } from './plain-text.ts'
-import { readQuery } from './query.ts'
 import { type Candidate, rank } from './rank.ts'
 import { fold } from './words.ts'
 
@@ -88,14 +87,6 @@ export type Resolution =
   | { kind: 'food'; food: Food; candidate: Candidate | null }
   | { kind: 'unknown' | 'unsure' | 'several' | 'no-such-state'; candidates: readonly Candidate[] }
 
-/** Two letters put wrong in a longer word are forgiven, not three. */
-const SURE_ENOUGH = 0.55
-
-/** Has it a word so short that, unfinished, it may begin anything? */
-function isTooShort(words: string): boolean {
-  return readQuery(words).some(({ stem }) => stem.length < 3)
-}
-
 /** Foods whose words fit so nearly alike that choosing would be a guess. */
 const ALIKE = 0.03
 
@@ -115,8 +106,7 @@ export function resolve(words: string, finder: Finder): Resolution {
   if (top === undefined) return { kind: 'unknown', candidates }
   if (!top.whole) return { kind: 'unknown', candidates }
   if (!top.inState) return { kind: 'no-such-state', candidates }
-  if (top.surety < SURE_ENOUGH || (top.surety < 1 && isTooShort(trimmed)))
-    return { kind: 'unsure', candidates }
+  if (!top.sure) return { kind: 'unsure', candidates }
   if (!top.first) {
     const rivals = candidates.filter(
       other => other.food.kin !== top.food.kin && other.inState && other.text > top.text - ALIKE,

@@ -93,7 +93,6 @@ const SPELLINGS = new Map(
     beetroot: 'beet',
     rutabaga: 'swede',
     arugula: 'rocket',
-    maize: 'corn',
     groundnut: 'peanut',
     linseed: 'flax',
     flaxseed: 'flax seed',
