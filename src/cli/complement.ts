@@ -1,0 +1,134 @@
+import { plainText } from '../foods/plain-text.ts'
+import { STAVE_NAMES } from '../nutrition/amino-acids.ts'
+import { diaasOf } from '../nutrition/diaas.ts'
+import { type Complement, complementsOf, inParts } from '../pairing/complement.ts'
+import { readArguments, readNumber } from './arguments.ts'
+import { careJson, careLines } from './care.ts'
+import { answer, type Command, jsonText, NO_ANSWER, Refusal } from './command.ts'
+import { readPlanningPattern, readWithout } from './options.ts'
+import { chosenShelf, namedFood, shelfFoods } from './shelf-source.ts'
+import { grams, signed, wholeScore } from './text/figures.ts'
+import { inColumns, wrapLines } from './text/lines.ts'
+import { styleOf } from './text/style.ts'
+
+export const complement: Command = {
+  name: 'complement',
+  summary: 'what mends one food best, and in what proportion',
+  help: `
+complement ID [--shelf FILE] [--without A] [...]
+
+  shortstave complement lentils-red-boiled
+  shortstave complement "white rice" --shelf galley.csv
+
+The partners that raise a food's DIAAS most, the best of each kind first, in the proportion by weight (both as their
+names say) that does it in portions a person eats. From the whole table, or from a shelf.
+  --shelf FILE     only from this shelf (- reads standard input; "mine" is the shelf you keep)
+  --without A      leave out foods with an allergen (may be given again)
+  --eggs, --dairy  allow them; otherwise plants alone
+  --most N         at most so many partners (8)
+  --pattern ID     the scoring pattern (fao-2013-over-3y)
+  --age YEARS      the eater's age; nothing is planned for a child under three
+  --json           the answer as JSON`,
+  async run(argv, world) {
+    const kinds = {
+      shelf: 'text',
+      without: 'texts',
+      eggs: 'flag',
+      dairy: 'flag',
+      most: 'text',
+      pattern: 'text',
+      age: 'text',
+      json: 'flag',
+    } as const
+    const { options, words } = readArguments('complement', kinds, argv)
+    if (words.length === 0)
+      throw new Refusal('complement needs a food, such as: shortstave complement lentils-red-boiled')
+    const food = namedFood(words.join(' '), world)
+    const age = readNumber('--age', options.age, { least: 0, most: 120, unit: 'years' })
+    const pattern = readPlanningPattern(world.table(), options.pattern, age)
+    const count =
+      readNumber('--most', options.most, { least: 1, most: 50, unit: 'partners', whole: true }) ?? 8
+    const shelf =
+      options.shelf === undefined
+        ? null
+        : await chosenShelf(options.shelf === 'mine' ? undefined : options.shelf, world)
+    const label = shelf?.label ?? 'the whole table'
+    const partners =
+      shelf === null
+        ? world.table().foods
+        : shelfFoods(shelf.shelf, world)
+            .filter(({ mark }) => mark !== 'hold-back')
+            .map(item => item.food)
+    const found = complementsOf(food, partners, {
+      pattern,
+      without: readWithout(options.without),
+      allow: { eggs: options.eggs, dairy: options.dairy },
+      count,
+      perRole: 2,
+    })
+    const own = diaasOf([{ food, grams: 100 }], pattern)
+    const foods = [food, ...found.map(partner => partner.food)]
+    if (options.json) {
+      const out = jsonText({
+        food: food.id,
+        name: food.name,
+        pattern: pattern.id,
+        diaas_alone: own.diaas,
+        limiting: own.limiting,
+        complements: found.map(complementJson),
+        ...careJson(foods),
+      })
+      return { code: found.length === 0 ? NO_ANSWER : 0, out, err: '' }
+    }
+    const style = styleOf(world.colour)
+    const short =
+      own.limiting === null
+        ? 'It has no protein to score.'
+        : `Alone: DIAAS ${wholeScore(own.diaas)}, short of ${STAVE_NAMES[own.limiting]}.`
+    const lines = [style.bold(food.name), ...wrapLines(short, world.columns)]
+    if (found.length === 0) {
+      const reason =
+        own.diaas !== null && own.diaas >= 100
+          ? 'Nothing is short in it, so nothing mends it.'
+          : `Nothing from ${plainText(label)} raises it.`
+      return { code: NO_ANSWER, out: `${lines.join('\n')}\n${reason}\n`, err: '' }
+    }
+    lines.push(`From ${label}, by weight:`, '')
+    const rows = found.map(partner => [
+      partner.food.name,
+      partsText(partner),
+      `${grams(partner.example.foodG)} + ${grams(partner.example.partnerG)}`,
+      `DIAAS ${wholeScore(partner.diaas)}`,
+      signed(partner.mends),
+      `short of ${partner.limiting}`,
+    ])
+    lines.push(...inColumns(rows, [4]), '')
+    lines.push(
+      ...wrapLines(
+        `"3 : 1" is three parts of ${plainText(food.name)} to one part of the partner. The last columns: what the mixture scores, by how much that is above the food alone, and which stave is its shortest.`,
+        world.columns,
+      ),
+      ...careLines(foods, world.columns),
+    )
+    return answer(`${lines.join('\n')}\n`)
+  },
+}
+
+function partsText({ ratio }: Complement): string {
+  const parts = inParts(ratio)
+  return `${parts.food} : ${parts.partner}`
+}
+
+function complementJson(partner: Complement) {
+  return {
+    food: partner.food.id,
+    name: partner.food.name,
+    grams_per_gram: partner.ratio,
+    example_food_g: partner.example.foodG,
+    example_partner_g: partner.example.partnerG,
+    diaas: partner.diaas,
+    limiting: partner.limiting,
+    lift: partner.lift,
+    mends: partner.mends,
+  }
+}

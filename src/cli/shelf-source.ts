@@ -1,0 +1,64 @@
+import { readFileSync } from 'node:fs'
+import { dataFile } from '../foods/data-file.ts'
+import type { Food } from '../foods/food.ts'
+import { plainText } from '../foods/plain-text.ts'
+import { foodByWords } from '../foods/search.ts'
+import type { ShelfFood } from '../pairing/problem.ts'
+import { readShelfFile } from '../shelf/import-export.ts'
+import type { Shelf } from '../shelf/shelf.ts'
+import { Refusal, type World } from './command.ts'
+
+/** The shelf a command works on, and how to call it in a sentence. */
+export interface NamedShelf {
+  shelf: Shelf
+  label: string
+}
+
+/**
+ * The shelf that is asked for: a file, standard input (`-`), else what the cook keeps, else the sample: the galley
+ * of a river survey boat. A file with a line that is not understood is refused whole, because a pairing that
+ * silently leaves a food out misleads.
+ */
+export async function chosenShelf(option: string | undefined, world: World): Promise<NamedShelf> {
+  if (option !== undefined) {
+    const label = option === '-' ? 'standard input' : plainText(option).slice(0, 100)
+    const text = option === '-' ? await world.readStdin() : await world.readFile(option)
+    return { shelf: shelfFromText(text, label, world), label }
+  }
+  const kept = await keptShelf(world)
+  return kept ?? { shelf: sampleShelf(world), label: 'the sample shelf (the galley of a river survey boat)' }
+}
+
+/** Reads a shelf file's text, or refuses it with the first line that is wrong and how many more there are. */
+export function shelfFromText(text: string, label: string, world: World): Shelf {
+  const { shelf, problems } = readShelfFile(text, words => foodByWords(words, world.finder()))
+  const [first, ...more] = problems
+  if (first === undefined) return shelf
+  const others = more.length === 0 ? '' : ` (and ${more.length} more ${more.length === 1 ? 'line' : 'lines'})`
+  throw new Refusal(`${label}, line ${first.line}: ${first.problem}${others}`)
+}
+
+export function sampleShelf(world: World): Shelf {
+  return shelfFromText(readFileSync(dataFile('sample-shelf.csv'), 'utf8'), 'sample shelf', world)
+}
+
+/** What the cook keeps in the store, or null while nothing has been put there. */
+async function keptShelf(_world: World): Promise<NamedShelf | null> {
+  return null
+}
+
+/** A shelf's items with their foods, for the combiner. */
+export function shelfFoods(shelf: Shelf, world: World): ShelfFood[] {
+  return shelf.items.map(item => {
+    const food = world.table().foodById.get(item.food)
+    if (food === undefined) throw new Refusal(`the shelf holds "${item.food}", which is not in the table`)
+    return { food, onHandG: item.grams, mark: item.mark }
+  })
+}
+
+/** A food that a command's words name, or a refusal with the nearest. */
+export function namedFood(words: string, world: World): Food {
+  const reading = foodByWords(words, world.finder())
+  if (reading.ok) return reading.food
+  throw new Refusal(reading.problem)
+}

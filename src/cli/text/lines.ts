@@ -1,0 +1,54 @@
+import stringWidth from 'string-width'
+
+/** Breaks a text into lines of at most `width` columns; lines after the first start with `indent` more blanks. */
+export function wrapLines(text: string, width: number, indent = 0): string[] {
+  const lines: string[] = []
+  let line = ''
+  for (const word of text.split(' ')) {
+    const candidate = line === '' ? word : `${line} ${word}`
+    if (line.trim() !== '' && stringWidth(candidate) > width) {
+      lines.push(line)
+      line = ' '.repeat(indent) + word
+    } else {
+      line = candidate
+    }
+  }
+  lines.push(line)
+  return lines
+}
+
+/** Pads on the right to `width` columns, counting wide characters as the terminal does. */
+export function padEnd(text: string, width: number): string {
+  return text + ' '.repeat(Math.max(0, width - stringWidth(text)))
+}
+
+export function padStart(text: string, width: number): string {
+  return ' '.repeat(Math.max(0, width - stringWidth(text))) + text
+}
+
+/** Cuts a text to `width` columns, with an ellipsis where something was cut. */
+export function clip(text: string, width: number): string {
+  if (stringWidth(text) <= width) return text
+  let cut = ''
+  for (const character of text) {
+    if (stringWidth(cut + character) > width - 1) break
+    cut += character
+  }
+  return `${cut}…`
+}
+
+/** Rows of cells in columns; `right` names the columns that are set flush right. */
+export function inColumns(rows: string[][], right: readonly number[] = [], gap = 2): string[] {
+  const widths: number[] = []
+  for (const row of rows) {
+    row.forEach((cell, i) => {
+      widths[i] = Math.max(widths[i] ?? 0, stringWidth(cell))
+    })
+  }
+  return rows.map(row =>
+    row
+      .map((cell, i) => (right.includes(i) ? padStart(cell, widths[i]!) : padEnd(cell, widths[i]!)))
+      .join(' '.repeat(gap))
+      .trimEnd(),
+  )
+}
