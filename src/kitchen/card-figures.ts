@@ -26,12 +26,16 @@ function mineral({ amount, unknown }: KnownSum, foods: number): string {
   return unknown.length === 0 ? text : `at least ${text} (no figure for ${unknown.length} of ${foods} foods)`
 }
 
-function ratioValue({ phytateZincRatio, phytate, zinc, take }: Card): string {
-  const unknown = new Set([...phytate.unknown, ...zinc.unknown]).size
-  if (unknown > 0) return `not known (no figure for ${unknown} of ${take.length} foods)`
-  if (phytateZincRatio === null) return 'no zinc'
-  const uptake = { high: 'well', moderate: 'moderately', low: 'poorly' }[zincUptake(phytateZincRatio)]
-  return `${Math.round(phytateZincRatio)} mol to 1: zinc taken up ${uptake}; a hint, meant for a whole diet`
+function ratioValue({ phytateZincRatio, phytateZincAtLeast, phytate, take }: Card): string {
+  if (phytateZincRatio === null) return 'not known'
+  const ratio = `${Math.round(phytateZincRatio)} mol to 1`
+  const uptake = zincUptake(phytateZincRatio)
+  // A ratio of 15 and more stays low whatever is not known; below that, more phytate could still change the class.
+  if (phytateZincAtLeast && uptake !== 'low')
+    return `at least ${ratio} (phytate not known for ${phytate.unknown.length} of ${take.length} foods)`
+  const words = { high: 'well', moderate: 'moderately', low: 'poorly' }[uptake]
+  const least = phytateZincAtLeast ? 'at least ' : ''
+  return `${least}${ratio}: zinc taken up ${words}; a hint, meant for a whole diet`
 }
 
 /** `97 (90 % band 89-104), good`; a score never rounds up into a better class. */

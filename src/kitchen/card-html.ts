@@ -70,7 +70,7 @@ ${staves === null ? '' : `<table>\n${STAVES.map(stave => staveRow(STAVE_NAMES[st
 `
     : ''
 }<section class="mind">
-<h2>Mind</h2>
+<h2>Take care</h2>
 <ul>
 <li>Allergens: ${html(allergensText(card))}</li>
 ${[...card.cautions, ...card.notes].map(({ text, source }) => `<li>${html(text)} <span class="source">(${html(source)})</span></li>`).join('\n')}

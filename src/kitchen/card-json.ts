@@ -48,6 +48,7 @@ export function cardJson(card: Card) {
       phytate_mg: card.phytate.amount,
       phytate_unknown_for: card.phytate.unknown,
       phytate_zinc_molar_ratio: card.phytateZincRatio,
+      phytate_zinc_molar_ratio_is_at_least: card.phytateZincAtLeast,
     },
     staves_in_words: card.staveWords,
     allergens: card.allergens,

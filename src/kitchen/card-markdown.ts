@@ -16,7 +16,7 @@ export function cardMarkdown(card: Card): string {
     for (const [label, value] of figuresOf(card)) lines.push(`| ${md(label)} | ${md(value)} |`)
     lines.push('', md(card.staveWords))
   }
-  lines.push('', '## Mind', '', `- Allergens: ${md(allergensText(card))}`)
+  lines.push('', '## Take care', '', `- Allergens: ${md(allergensText(card))}`)
   for (const { text, source } of [...card.cautions, ...card.notes])
     lines.push(`- ${md(text)} (${md(source)})`)
   lines.push('', '## Left over', '')

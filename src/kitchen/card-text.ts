@@ -25,7 +25,7 @@ export function cardText(card: Card, columns = 80): string {
     for (const [label, value] of figuresOf(card)) hang(lines, label, value, 17, columns)
     say(card.staveWords)
   }
-  heading('Mind')
+  heading('Take care')
   say(`Allergens: ${allergensText(card)}.`)
   for (const { text } of [...card.cautions, ...card.notes]) say(`- ${text}`, '  ')
   heading('Left over')

@@ -65,7 +65,10 @@ export interface Card {
   iron: KnownSum
   zinc: KnownSum
   phytate: KnownSum
+  /** mol phytate to 1 mol zinc; null where it cannot be told */
   phytateZincRatio: number | null
+  /** the phytate of some food is not known, so the ratio is that much or more */
+  phytateZincAtLeast: boolean
   allergens: AllergenId[]
   cautions: Caution[]
   /** notes by what the settings tell of the person */
@@ -148,16 +151,16 @@ export function stavesInWords({ staves, pattern }: Pick<PlateScore<Food>, 'stave
   if (staves === null) return 'There is no protein on this plate to score.'
   const short = STAVES.filter(stave => staves[stave] < 100).sort((a, b) => staves[a] - staves[b])
   const say = (stave: Stave) => `${STAVE_NAMES[stave]} (${Math.floor(staves[stave])} %)`
+  const against = `Pattern: ${pattern.name}.`
   const [first, ...more] = short
   if (first === undefined) {
     const least = STAVES.reduce((a, b) => (staves[b] < staves[a] ? b : a))
-    return `Every amino acid reaches the pattern, ${pattern.name}; ${say(least)} has the least to spare.`
+    return `Every amino acid reaches the pattern; ${say(least)} has the least to spare. ${against}`
   }
-  const rest =
-    more.length === 0
-      ? 'all others reach the pattern'
-      : `also short: ${more.map(say).join(', ')}${more.length === STAVES.length - 1 ? '' : '; the others reach the pattern'}`
-  return `Shortest: ${say(first)} of the pattern, ${pattern.name}; ${rest}.`
+  const shortest = `Shortest: ${STAVE_NAMES[first]}, ${Math.floor(staves[first])} % of the pattern`
+  const also = more.length === 0 ? '' : `; also short: ${more.map(say).join(', ')}`
+  const others = more.length === STAVES.length - 1 ? '' : '; the others reach it'
+  return `${shortest}${also}${others}. ${against}`
 }
 
 /** How to keep what is left, by what is on the plate: the strictest first. */

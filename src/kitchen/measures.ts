@@ -18,6 +18,9 @@ const OFFERED_WITHIN = 0.15
 /** More pieces than this are rather filled into a cup. */
 const COUNTED_GLADLY = 8
 
+/** More cups than this nobody fills: the scale is quicker. */
+const CUPS_AT_MOST = 12
+
 const CUP_PARTS = [0, 1 / 4, 1 / 3, 1 / 2, 2 / 3, 3 / 4] as const
 const SPOON_PARTS = [0, 1 / 2] as const
 const PIECE_PARTS = [0, 1 / 2] as const
@@ -67,7 +70,7 @@ const band = (error: number): number => (error <= EQUAL_WITHIN ? 0 : error <= 0.
 
 function cupOptions(grams: number, cupG: number): Option[] {
   const count = roundToOneOf(grams / cupG, CUP_PARTS)
-  if (count.value < 1 / 4) return []
+  if (count.value < 1 / 4 || count.value > CUPS_AT_MOST) return []
   const options = [{ text: cups(count), grams: count.value * cupG, effort: 1 }]
   // A quarter, third or half cup and a few spoons more, for amounts that fall between.
   const tbspG = cupG / TBSP_IN_CUP
@@ -149,7 +152,7 @@ function filledMeasure(food: Pick<Food, 'measures'>): { cupG: number; form: stri
     const found = food.measures.flatMap(({ name, grams }) => {
       const parts = split(name)
       if (parts === null || !pattern.test(parts.unit.toLowerCase())) return []
-      return [{ cupG: (grams / parts.count) * toCup, form: /,.*/.exec(parts.unit)?.[0] ?? '' }]
+      return [{ cupG: (grams / parts.count) * toCup, form: /,[^,]*/.exec(parts.unit)?.[0] ?? '' }]
     })
     const [first] = found
     if (first !== undefined) return { cupG: first.cupG, form: found.length > 1 ? first.form : '' }

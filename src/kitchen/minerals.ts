@@ -49,7 +49,10 @@ export function knownSum(
 /** What holds no phytate to speak of even where no table says so: it is a store of seeds. */
 const WITHOUT_PHYTATE: readonly Food['role'][] = ['egg', 'dairy', 'meat-fish', 'fat-sugar']
 
-/** Iron, zinc and the phytate:zinc ratio of a plate; the ratio only where both are known of every food that counts. */
+/**
+ * Iron, zinc and the phytate:zinc ratio of a plate. Where a food's phytate is not known, the ratio is at least that of
+ * the known (`phytateZincAtLeast`); where a food's zinc is not known, there is none.
+ */
 export function mineralsOf(portions: readonly Portion<Food>[]) {
   const iron = knownSum(portions, food => food.per100g.ironMg)
   const zinc = knownSum(portions, food => food.per100g.zincMg)
@@ -57,11 +60,9 @@ export function mineralsOf(portions: readonly Portion<Food>[]) {
     portions,
     food => food.per100g.phytateMg ?? (WITHOUT_PHYTATE.includes(food.role) ? 0 : null),
   )
-  const known = phytate.unknown.length === 0 && zinc.unknown.length === 0
-  return {
-    iron,
-    zinc,
-    phytate,
-    phytateZincRatio: known ? phytateZincRatio(phytate.amount, zinc.amount) : null,
-  }
+  const ratio =
+    zinc.unknown.length === 0 && phytate.unknown.length < portions.length
+      ? phytateZincRatio(phytate.amount, zinc.amount)
+      : null
+  return { iron, zinc, phytate, phytateZincRatio: ratio, phytateZincAtLeast: phytate.unknown.length > 0 }
 }

@@ -176,7 +176,7 @@ describe('the card', () => {
     >
     expect(stavesInWords({ staves, pattern: basis.pattern })).toMatch(/^Every amino acid reaches/)
     expect(stavesInWords({ staves: { ...staves, lys: 91.7, saa: 99.96 }, pattern: basis.pattern })).toMatch(
-      /^Shortest: lysine \(91 %\).*also short: methionine \+ cysteine \(99 %\)/,
+      /^Shortest: lysine, 91 % of the pattern; also short: methionine \+ cysteine \(99 %\)/,
     )
     expect(stavesInWords({ staves: null, pattern: basis.pattern })).toMatch(/no protein/)
   })
