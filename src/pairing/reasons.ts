@@ -16,7 +16,7 @@ export function whyOf(score: PlateScore<Food>): string[] {
   const proteins = score.items.filter(item => item.diaasAlone !== null && item.grams > 0)
   if (proteins.length < 2) return [aloneReason(proteins[0]!, score)]
   const lines = shortages(proteins, score)
-  const now = round(score.staves[score.limiting])
+  const now = whole(score.staves[score.limiting])
   lines.push(
     score.diaas >= FULL
       ? `No stave is short now: the shortest, ${STAVE_NAMES[score.limiting]}, is ${now} % of the pattern.`
@@ -27,7 +27,7 @@ export function whyOf(score: PlateScore<Food>): string[] {
 
 function aloneReason(item: ScoredItem<Food>, score: PlateScore<Food>): string {
   const shortest = STAVE_NAMES[score.limiting!]
-  const now = round(score.staves![score.limiting!])
+  const now = whole(score.staves![score.limiting!])
   return score.diaas! >= FULL
     ? `${shortName(item.food)} needs no partner: its shortest stave, ${shortest}, is ${now} % of the pattern.`
     : `${shortName(item.food)} alone is short of ${shortest} (${now} %).`
@@ -47,13 +47,14 @@ function shortages(proteins: readonly ScoredItem<Food>[], score: PlateScore<Food
     const helpers = proteins.filter(
       other => other !== item && own.get(other)![short] > score.staves![short] - 0.5,
     )
-    const carries = strong === null ? '' : ` carries ${STAVE_NAMES[strong]} (${round(staves[strong])})`
-    const lacks = `short of ${STAVE_NAMES[short]} (${round(staves[short])})`
-    const mends =
+    const rich = strong === null ? '' : `rich in ${STAVE_NAMES[strong]} (${whole(staves[strong])}), `
+    const mended =
       helpers.length === 0
-        ? `; the plate stands at ${round(score.staves![short])}`
-        : `; ${joined(helpers.map(({ food }) => lower(shortName(food))))} ${helpers.length === 1 ? 'brings' : 'bring'} it to ${round(score.staves![short])}`
-    lines.push(`${shortName(item.food)}${carries === '' ? ' is ' : `${carries} but is `}${lacks}${mends}.`)
+        ? `the plate stands at ${whole(score.staves![short])}`
+        : `with ${joined(helpers.map(({ food }) => lower(shortName(food))))} it comes to ${whole(score.staves![short])}`
+    lines.push(
+      `${shortName(item.food)}: ${rich}short of ${STAVE_NAMES[short]} (${whole(staves[short])}); ${mended}.`,
+    )
   }
   return lines
 }
@@ -102,7 +103,8 @@ const STATE_WORDS = new Set([
   'plain',
 ])
 
-const round = (value: number): number => Math.round(value)
+/** Whole per cent, rounded down: 99.8 is not yet 100. */
+const whole = (value: number): number => Math.floor(value + 1e-9)
 const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)
 const lower = (text: string): string =>
   /^[A-Z][a-z]/.test(text) ? text.charAt(0).toLowerCase() + text.slice(1) : text

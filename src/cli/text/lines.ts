@@ -2,10 +2,11 @@ import stringWidth from 'string-width'
 
 /** Breaks a text into lines of at most `width` columns; lines after the first start with `indent` more blanks. */
 export function wrapLines(text: string, width: number, indent = 0): string[] {
+  const start = /^ */.exec(text)![0]
   const lines: string[] = []
-  let line = ''
-  for (const word of text.split(' ')) {
-    const candidate = line === '' ? word : `${line} ${word}`
+  let line = start
+  for (const word of text.trimStart().split(' ')) {
+    const candidate = line.trim() === '' ? line + word : `${line} ${word}`
     if (line.trim() !== '' && stringWidth(candidate) > width) {
       lines.push(line)
       line = ' '.repeat(indent) + word

@@ -57,7 +57,7 @@ function full(stacks: readonly Stack[], options: DrawOptions): string[] {
       const space = dim(between.repeat(gap))
       return space + bar(stack, row, { rowValue, height, barWidth, between, ascii, paint, dim })
     })
-    lines.push(label + cells.join('') + dim(between.repeat(gap)))
+    lines.push((label + cells.join('') + dim(between.repeat(gap))).trimEnd())
   }
   const shortest = shortestOf(stacks)
   const centred = (text: string) =>
