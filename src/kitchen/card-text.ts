@@ -72,7 +72,7 @@ function hang(lines: string[], label: string, text: string, width: number, colum
 function wrap(text: string, width: number, indent = ''): string[] {
   const lines: string[] = []
   let line = ''
-  for (const word of text.split(' ')) {
+  for (const word of text.split(/ (?!%)/)) {
     let rest = word
     if (line !== '' && stringWidth(`${line} ${rest}`) > width) {
       lines.push(line)
