@@ -1,6 +1,6 @@
 import type { Food } from './food.ts'
 import { statesOf } from './state-words.ts'
-import { wordsOf } from './words.ts'
+import { isStopWord, wordsOf } from './words.ts'
 
 /** A name by which foods of one kin are known. */
 export interface Entry {
@@ -70,7 +70,7 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
     const seen: string[] = []
     for (const [place, part] of partsOf(text).entries()) {
       for (const word of wordsOf(part.text)) {
-        if (seen.includes(word)) continue
+        if (isStopWord(word) || seen.includes(word)) continue
         seen.push(word)
         const isState = statesOf(word) !== null
         const weight =

@@ -9,6 +9,8 @@ export interface ParsedMeasure {
   /** grams in one: of `1/4 block` 81 g, four times that */
   grams: number
   unit: Unit | null
+  /** what the label of a container says, g: `1 can 400 g, drained` weighs less */
+  labelG: number | null
   /** singular words of the measure's noun: `block`; `potato` */
   nouns: string[]
   /** what it says after its first comma and in brackets, and its words of size */
@@ -30,18 +32,20 @@ const SIZES = [
 
 /** Takes a measure's name apart; a name without an amount counts as one. */
 export function parseMeasure(measure: Measure): ParsedMeasure {
-  const name = keyboardSigns(measure.name)
+  // dimensions in brackets tell nothing that anyone would type
+  const name = keyboardSigns(measure.name).replace(/\s*\((?:approx|yield|[\d"])[^()]*\)/i, '')
   const amount = scanAmount(name)
   const term = amount?.terms[0]
   const count = amount?.doubt === null && term !== undefined && term.count > 0 ? term.count : 1
   const rest = term === undefined ? name : name.slice(amount!.end)
   const cut = rest.search(/[,(]/)
-  const nouns = wordsOf(cut < 0 ? rest : rest.slice(0, cut))
+  const nouns = wordsOf((cut < 0 ? rest : rest.slice(0, cut)).replace(/\d.*$/, ''))
   const sizes = term?.sizes ?? []
   return {
     measure,
     grams: measure.grams / count,
     unit: term?.unit ?? null,
+    labelG: term?.eachG ?? null,
     nouns: nouns.filter(word => !SIZES.includes(word)),
     qualifiers: [
       ...sizes,
@@ -124,15 +128,17 @@ export function weighUnit(
 }
 
 function weighLabelled(food: Food, unit: Unit, eachG: number): Weighed {
-  const isCan = unit.name === 'can' || unit.name === 'jar'
-  if (isCan && food.state === 'canned' && wordsOf(food.name).includes('drained')) {
-    return {
-      grams: eachG * DRAINED_SHARE,
-      measure: unit.name,
-      note: `drained, about ${DRAINED_SHARE * 100} % of what the label says, common practice`,
-    }
+  const isDrained = food.state === 'canned' && wordsOf(food.name).includes('drained')
+  if (!isDrained || (unit.name !== 'can' && unit.name !== 'jar'))
+    return { grams: eachG, measure: unit.name, note: '' }
+  const own = measuresOf(food).find(measure => measure.unit?.name === unit.name && measure.labelG !== null)
+  if (own !== undefined)
+    return { grams: (eachG * own.grams) / own.labelG!, measure: own.measure.name, note: 'drained' }
+  return {
+    grams: eachG * DRAINED_SHARE,
+    measure: unit.name,
+    note: `drained, about ${DRAINED_SHARE * 100} % of what the label says, common practice`,
   }
-  return { grams: eachG, measure: unit.name, note: '' }
 }
 
 /** Largest units first: a spoon derived from a cup is nearer the truth than a cup from a spoon. */

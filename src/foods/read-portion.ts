@@ -1,3 +1,4 @@
+import { isUnusualState } from './everyday.ts'
 import type { Food } from './food.ts'
 import {
   gramsText,
@@ -91,8 +92,10 @@ function readParted(said: string, parted: Parted, finder: Finder, options: Porti
     return refused(`"${said}" gives two amounts; give one, such as ${amountText} and the food`)
   }
   const resolution = resolveFor(amount, foodText, finder)
+  const named = unitInName(parted, resolution, finder)
+  if (named !== null) return readParted(said, named, finder, options)
   if (resolution.kind !== 'food') return noFood(parted, resolution)
-  const { food, candidate } = resolution
+  const { food, candidate } = inMeasuredState(resolution, amount, foodText, finder)
   if (amount === null) {
     if (options.missingAmount === 'usual portion') {
       const grams = food.portionG.usual
@@ -195,6 +198,42 @@ function resolveFor(amount: Scanned | null, foodText: string, finder: Finder): R
   return kins.size === 1 ? { kind: 'food', food: measured[0]!.food, candidate: measured[0]! } : resolution
 }
 
+/** Where no state was said, the state that has the measure: leaves come by the handful raw, not boiled. */
+function inMeasuredState(
+  resolution: Extract<Resolution, { kind: 'food' }>,
+  amount: Scanned | null,
+  foodText: string,
+  finder: Finder,
+): Extract<Resolution, { kind: 'food' }> {
+  const { food, candidate } = resolution
+  if (candidate === null || candidate.stateAsked || amount === null || amount.doubt !== null)
+    return resolution
+  const weighs = (other: Food) => weighTerms(amount.terms, other, foodText) !== null
+  if (weighs(food)) return resolution
+  const other = finder
+    .weigh(foodText)
+    .find(({ food: mate, whole }) => mate.kin === food.kin && whole && !isUnusualState(mate) && weighs(mate))
+  return other === undefined ? resolution : { kind: 'food', food: other.food, candidate: other }
+}
+
+/** Units that also begin the names of foods: bottle gourd, pot barley, head lettuce. */
+const IN_NAMES = new Set(['bottle', 'pot', 'ear', 'bar', 'head', 'stick'])
+
+/** `120 g bottle gourd` and `2 bottle gourds`, where the unit turns out to be part of the food's name. */
+function unitInName(parted: Parted, resolution: Resolution, finder: Finder): Parted | null {
+  const term = parted.amount?.terms[0]
+  if (term?.unit?.kind !== 'piece' || parted.amount?.terms.length !== 1) return null
+  const foodText = `${term.unit.name} ${parted.foodText}`
+  if (resolution.kind === 'food' && !IN_NAMES.has(term.unit.name)) return null
+  const named = resolve(foodText, finder)
+  if (named.kind !== 'food' || !(named.candidate?.exact || named.candidate?.first)) return null
+  const plain: Term =
+    term.eachG === null
+      ? { ...term, unit: null, eachMl: null }
+      : { ...term, count: term.count * term.eachG, unit: unitOf('g'), eachG: null }
+  return { amount: { ...parted.amount, terms: [plain] }, amountText: parted.amountText, foodText }
+}
+
 interface WeighedTerms {
   grams: number
   measure: string | null
@@ -206,13 +245,18 @@ function weighTerms(terms: readonly Term[], food: Food, foodText: string) {
   let grams = 0
   let measure: string | null = null
   const notes: string[] = []
-  for (const { count, unit, eachG, sizes } of terms) {
+  for (const { count, unit, eachG, eachMl, sizes } of terms) {
     if (unit?.kind === 'mass') {
       grams += count * unit.grams
       continue
     }
     const around = [...words, ...sizes]
-    const one = unit === null ? weighOne(food, around) : weighUnit(food, unit, around, eachG)
+    const one =
+      unit === null
+        ? weighOne(food, around)
+        : eachMl === null
+          ? weighUnit(food, unit, around, eachG)
+          : weighMillilitres(food, eachMl, around)
     if (one === null || 'several' in one) return one
     grams += count * one.grams
     measure = one.measure
@@ -223,6 +267,13 @@ function weighTerms(terms: readonly Term[], food: Food, foodText: string) {
   const weighed: WeighedTerms = { grams, measure, notes }
   return weighed
 }
+
+/** What a container holds whose label gives a volume. */
+function weighMillilitres(food: Food, eachMl: number, words: readonly string[]) {
+  const one = weighUnit(food, MILLILITRE, words, null)
+  return one === null || 'several' in one ? one : { ...one, grams: one.grams * eachMl }
+}
+const MILLILITRE: Unit & { kind: 'volume' } = { kind: 'volume', name: 'ml', millilitres: 1 }
 
 /** Where the food is there both dry and cooked and the text said neither, the difference must be seen. */
 function stateNote(food: Food, finder: Finder): string {
@@ -262,13 +313,18 @@ function measureWords(name: string): string {
 
 function inGrams(grams: number, food: Food): NearReading {
   const shownG = Number(grams.toPrecision(6))
-  return { text: `${shownG} g ${food.name}`, food, grams: shownG }
+  const byName = { text: `${shownG} g ${food.name}`, food, grams: shownG }
+  return isUnderstood(byName) ? byName : { ...byName, text: `${shownG} g ${food.id}` }
 }
 
 /** Does the reading's text, parted again, weigh what it says? */
 function isUnderstood({ text, food, grams }: NearReading): boolean {
   const { amount, foodText } = part(text)
-  if (amount === null || amount.doubt !== null || foodText.toLowerCase() !== cleaned(food.name).toLowerCase())
+  if (
+    amount === null ||
+    amount.doubt !== null ||
+    ![cleaned(food.name).toLowerCase(), food.id].includes(foodText.toLowerCase())
+  )
     return false
   const weighed = weighTerms(amount.terms, food, foodText)
   return (
@@ -301,7 +357,7 @@ function noFood(parted: Parted, resolution: Exclude<Resolution, { kind: 'food' }
 
 function doubtful(said: string, amount: Scanned, doubt: Doubt, food: Food): Refused {
   const as = (count: number): NearReading[] => {
-    const term = { ...amount.terms[0]!, count, eachG: null }
+    const term = { ...amount.terms[0]!, count, eachG: null, eachMl: null }
     const counted = { terms: [term], doubt: null, end: 0 }
     if (!(count > 0)) return []
     const unit = term.unit?.name ?? ''
@@ -318,8 +374,8 @@ function doubtful(said: string, amount: Scanned, doubt: Doubt, food: Food): Refu
       ])
     case 'comma': {
       const size = amount.terms[0]!
-      if (size.eachG !== null) {
-        const total = [doubt.low, doubt.high].map(grams => inGrams(grams, food))
+      if (size.eachG !== null || size.eachMl !== null) {
+        const total = size.eachG === null ? [] : [doubt.low, doubt.high].map(grams => inGrams(grams, food))
         return refused(`"${said}" may mean the weight of each or of all; give the whole weight`, total)
       }
       return refused(`"${said}" may mean ${doubt.low} or ${doubt.high}; write it without the comma`, [

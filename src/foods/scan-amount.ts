@@ -5,8 +5,10 @@ export interface Term {
   count: number
   /** null: so many of the food itself (`two eggs`) */
   unit: Unit | null
-  /** what each container weighs by its label, g, where the text says so */
+  /** what each container holds by its label, g, where the text says so */
   eachG: number | null
+  /** or ml */
+  eachMl: number | null
   /** words of size before the unit or the food: `large` */
   sizes: string[]
 }
@@ -88,10 +90,16 @@ const SIZE =
 const HEAPED =
   /\s*(heaped|heaping|rounded|scant|generous|mounded|overflowing|packed|good|full)\b(?=\s+[a-z])/iy
 const FL_OZ = /\s*(?:fl\.?|fluid)\s*(?:oz|ounces?)\b\.?/iy
-const UNIT_WORD = /\s*-?\s*([a-z]+)(?![\p{L}\p{N}'])\.?/iuy
+const UNIT_WORD = /\s*-?\s*([a-z]+)(?!-?[\p{L}\p{N}'])\.?/iuy
 const OPEN = /\s*\(\s*/y
 const CLOSE = /\s*(?:each|per can|per tin)?\s*\)/iy
 const EACH = /\s*each\b/iy
+
+/** Volumes that no label gives. */
+const SPOONS = new Set(['cup', 'tbsp', 'tsp'])
+
+type Label = Pick<Term, 'eachG' | 'eachMl'>
+const NO_LABEL: Label = { eachG: null, eachMl: null }
 
 /** What is sold by the weight on its label. */
 const CONTAINERS = new Set(
@@ -222,39 +230,61 @@ export function scanAmount(text: string, start = 0): Scanned | null {
     })
   }
 
-  function mass(): number | null {
+  /** what a label says */
+  function label(): Label | null {
     return attempt(() => {
       const read = number()
       const measured = read === null ? null : unit()
-      return read !== null && measured?.kind === 'mass' ? read.value * measured.grams : null
+      if (read === null || measured === null || measured.kind === 'piece' || SPOONS.has(measured.name))
+        return null
+      return measured.kind === 'mass'
+        ? { eachG: read.value * measured.grams, eachMl: null }
+        : { eachG: null, eachMl: read.value * measured.millilitres }
     })
   }
 
   /** `400 g`, `(400 g)`, `14-oz` before a container, and the container */
-  function labelled(): { eachG: number; unit: Unit } | null {
+  function labelled(): (Label & { unit: Unit }) | null {
     return attempt(() => {
       const bracketed = eat(OPEN) !== null
-      const eachG = mass()
-      if (eachG === null || (bracketed && eat(CLOSE) === null)) return null
+      const each = label()
+      if (each === null || (bracketed && eat(CLOSE) === null)) return null
       const container = unit()
-      return container?.kind === 'piece' && CONTAINERS.has(container.name) ? { eachG, unit: container } : null
+      return container?.kind === 'piece' && CONTAINERS.has(container.name)
+        ? { ...each, unit: container }
+        : null
     })
   }
 
   /** `(400 g)` after a measure: of each where it is a container, of all where it is a volume; `(1 cup)` after a mass */
-  function bracketed(counted: Unit, count: number): { grams: number; isDoubtful: boolean } | null {
+  function bracketed(counted: Unit, count: number): (Label & { isDoubtful: boolean }) | null {
     return attempt(() => {
-      if (eat(OPEN) === null) return null
-      if (counted.kind === 'mass') {
-        if (number() === null || unit() === null || eat(CLOSE) === null) return null
-        return { grams: counted.grams, isDoubtful: false }
+      const isContainer = counted.kind === 'piece' && CONTAINERS.has(counted.name)
+      const isOpen = eat(OPEN) !== null
+      // 1 can 400 g
+      if (!isOpen && !isContainer) return null
+      if (counted.kind !== 'piece') {
+        const other = attempt(() => {
+          const read = number()
+          const also = read === null ? null : unit()
+          return also === null || also.kind === counted.kind || eat(CLOSE) === null
+            ? null
+            : { read: read!, also }
+        })
+        if (other === null) return null
+        const grams =
+          other.also.kind === 'mass' && count > 0 ? (other.read.value * other.also.grams) / count : null
+        return { eachG: counted.kind === 'volume' ? grams : null, eachMl: null, isDoubtful: false }
       }
-      const grams = mass()
+      const said = label()
       const isEach = eat(EACH) !== null
-      if (grams === null || eat(CLOSE) === null) return null
-      if (counted.kind === 'volume') return { grams: count > 0 ? grams / count : grams, isDoubtful: false }
-      // two cans (400 g): of each or of both?
-      return { grams, isDoubtful: count > 1 && !isEach }
+      if (said === null || (isOpen && eat(CLOSE) === null)) return null
+      if (counted.kind === 'piece') return { ...said, isDoubtful: count > 1 && !isEach }
+      return {
+        ...NO_LABEL,
+        eachG: said.eachG === null || count <= 0 ? null : said.eachG / count,
+        isDoubtful: false,
+      }
     })
   }
 
@@ -266,10 +296,10 @@ export function scanAmount(text: string, start = 0): Scanned | null {
       if (read === null) return null
       let { value: count, doubt } = read
       if (doubt?.kind === 'vague' || doubt?.kind === 'not-finite') {
-        return { term: { count, unit: unit(), eachG: null, sizes: [] }, doubt }
+        return { term: { count, unit: unit(), ...NO_LABEL, sizes: [] }, doubt }
       }
-      const label = labelled()
-      if (label !== null) return { term: { count, ...label, sizes: [] }, doubt }
+      const marked = labelled()
+      if (marked !== null) return { term: { count, ...marked, sizes: [] }, doubt }
       if (eat(TIMES) !== null) {
         const many = labelled()
         if (many !== null) return { term: { count, ...many, sizes: [] }, doubt }
@@ -298,8 +328,13 @@ export function scanAmount(text: string, start = 0): Scanned | null {
       }
       const counted = unit()
       const each = counted === null ? null : bracketed(counted, count)
-      if (each?.isDoubtful) doubt ??= { kind: 'comma', low: each.grams, high: each.grams * count }
-      return { term: { count, unit: counted, eachG: each?.grams ?? null, sizes }, doubt }
+      // two cans (400 g): of each or of both?
+      if (each?.isDoubtful) {
+        const said = each.eachG ?? each.eachMl!
+        doubt ??= { kind: 'comma', low: said, high: said * count }
+      }
+      const { eachG, eachMl } = each ?? NO_LABEL
+      return { term: { count, unit: counted, eachG, eachMl, sizes }, doubt }
     })
   }
 

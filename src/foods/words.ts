@@ -48,8 +48,8 @@ export function singular(word: string): string {
 }
 
 /**
- * One spelling for words that are written in several ways, and one word for those that name the same thing
- * everywhere; keys and values are singular. What differs between countries (`cornflour`) is left to the aliases.
+ * One spelling for words that are written in several ways; keys and values are singular. Other words for the same
+ * food (`aubergine`, `brinjal`) are left to the aliases, so that the search knows them when they are mistyped.
  */
 const SPELLINGS = new Map(
   Object.entries({
@@ -80,26 +80,9 @@ const SPELLINGS = new Map(
     urid: 'urad',
     azuki: 'adzuki',
     aduki: 'adzuki',
-    fava: 'faba',
-    broad: 'faba',
-    broadbean: 'faba bean',
-    favabean: 'faba bean',
-    fababean: 'faba bean',
-    garbanzo: 'chickpea',
-    aubergine: 'eggplant',
-    brinjal: 'eggplant',
-    courgette: 'zucchini',
-    cilantro: 'coriander',
-    beetroot: 'beet',
-    rutabaga: 'swede',
-    arugula: 'rocket',
-    groundnut: 'peanut',
-    linseed: 'flax',
     flaxseed: 'flax seed',
-    rapeseed: 'canola',
     chilli: 'chili',
     chile: 'chili',
-    chilly: 'chili',
     chillie: 'chili',
     chillies: 'chili',
     wholemeal: 'whole wheat',
@@ -115,16 +98,9 @@ const SPELLINGS = new Map(
     jarred: 'canned',
     grey: 'gray',
     filo: 'phyllo',
-    ketchup: 'catsup',
-    catchup: 'catsup',
-    sultana: 'raisin',
     dehulled: 'hulled',
     husked: 'hulled',
     shelled: 'hulled',
-    mangetout: 'snow pea',
-    scallion: 'spring onion',
-    zuchini: 'zucchini',
-    brocolli: 'broccoli',
     sprouted: 'sprout',
     sprouting: 'sprout',
     germinated: 'sprout',
@@ -219,7 +195,7 @@ const WEAK_WORDS = new Set(
   (
     'plain ordinary regular standard common organic ripe chopped diced sliced minced rinsed drained peeled grated ' +
     'cubed crumbled mashed shredded washed trimmed pitted stoned unsalted salted salt unsweetened cold hot warm ' +
-    'leftover home made homemade large medium small big whole natural pure seed bean grain kernel nut groat piece ' +
+    'leftover home made homemade large medium small big long short round whole natural pure seed bean grain kernel nut groat piece ' +
     'food packed heaped level extra style type good nice local'
   ).split(' '),
 )

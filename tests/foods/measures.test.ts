@@ -14,9 +14,10 @@ describe('a measure taken apart', () => {
     ['10 sheets', 'sheet', 10, []],
     ['1 can, drained', 'can', 100, ['drained']],
     ['1 cup, chopped', 'cup', 100, ['chopped']],
-    ['1 tbsp (1/16 cup)', 'tbsp', 100, ['cup']],
+    ['1 tbsp (1/16 cup)', 'tbsp', 100, []],
+    ['1 can 400 g, drained', 'can', 100, ['drained']],
     ['1 large', undefined, 100, ['large']],
-    ['1 tortilla, medium (approx 6" dia)', undefined, 100, ['medium', 'approx', 'dia']],
+    ['1 tortilla, medium (approx 6" dia)', undefined, 100, ['medium']],
   ])('%s', (name, unitName, grams, qualifiers) => {
     const measure = parseMeasure({ name, grams: 100, source: 'test' })
     expect(measure.unit?.name).toBe(unitName)

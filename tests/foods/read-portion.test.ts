@@ -110,6 +110,8 @@ describe('what is understood', () => {
     ['a 400g tin of black beans', 'black-beans-canned', 240, 'can'],
     ['1 can of black beans (400 g)', 'black-beans-canned', 240, 'can'],
     ['half a tin (400 g) of black beans', 'black-beans-canned', 120, 'can'],
+    ['1 can 400 g black beans', 'black-beans-canned', 240, 'can'],
+    ['a 500 ml carton of soy milk', 'soy-milk', 513.55, '1 cup'],
     ['200 g block of tofu', 'tofu-firm', 200, 'block'],
     ['2 cups (380 g) quinoa', 'quinoa-boiled', 380, 'cup'],
     ['200 g (1 cup) quinoa', 'quinoa-boiled', 200, null],

@@ -379,7 +379,7 @@ export const SMALL_TABLE: readonly Food[] = [
     kin: 'eggplant',
     role: 'vegetable',
     state: 'raw',
-    aliases: ['Vankaya', 'Kathirikkai', 'বেগুন'],
+    aliases: ['eggplant', 'brinjal', 'Vankaya', 'Kathirikkai', 'বেগুন'],
   }),
   food({
     id: 'egg-raw',
