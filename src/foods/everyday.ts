@@ -33,7 +33,7 @@ const STATE_MEANT: Readonly<Record<Role, readonly State[]>> = {
   dairy: PRODUCT_FIRST,
   'meat-fish': RAW_FIRST,
 }
-const LAST = 9
+const LAST = 8
 
 /** 0 for the state that a cook means where none is said, more for others; of a kin, that of its first answer. */
 export function stateRank(food: Food): number {

@@ -9,6 +9,8 @@ export interface Entry {
   owners: number[]
   /** place in `kins` */
   kin: number
+  /** one of the local names: good by itself, no help to other names */
+  isLocal: boolean
   /** does it hold only for its owners, not for their kin in other states? */
   ownOnly: boolean
   /** where its words begin in the index's lists by position, and how many they are */
@@ -32,7 +34,13 @@ export interface FoodIndex {
   positions: Map<string, number[]>
   /** every word, sorted, for finding beginnings */
   vocabulary: string[]
+  /** by word: 0 if it stands in a food's name or bare words, 1 in an alias, 3 only in local names */
+  rarity: Map<string, number>
 }
+
+/** The local names of the Indian table begin with a capital, the aliases that cooks everywhere know do not. */
+const LOCAL = 3
+const LOCAL_NAME = /^\p{Lu}/u
 
 const FIRST_PART = 1
 const LATER_PARTS = [0.25, 0.15, 0.1]
@@ -47,10 +55,12 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
   const entryAt: number[] = []
   const weightAt: number[] = []
   const positions = new Map<string, number[]>()
+  const rarity = new Map<string, number>()
   /** by kin, then by text */
   const aliases: Map<string, Entry>[] = []
 
   function add(kind: Entry['kind'], text: string, food: number, kin: number): void {
+    const rare = kind !== 'alias' ? 0 : LOCAL_NAME.test(text) ? LOCAL : 1
     const present = kind === 'name' ? undefined : aliases[kin]!.get(text)
     if (present !== undefined && present.kind === kind) {
       if (!present.owners.includes(food)) present.owners.push(food)
@@ -61,6 +71,7 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
       kind,
       owners: [food],
       kin,
+      isLocal: rare === LOCAL,
       ownOnly: kind === 'name',
       from,
       length: 0,
@@ -72,6 +83,7 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
       for (const word of wordsOf(part.text)) {
         if (isStopWord(word) || seen.includes(word)) continue
         seen.push(word)
+        if (rare < (rarity.get(word) ?? 9)) rarity.set(word, rare)
         const isState = statesOf(word) !== null
         const weight =
           place === 0 ? FIRST_PART : isState ? STATE_WORD : part.bracketed ? IN_BRACKETS : later(place)
@@ -105,7 +117,16 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
     for (const alias of food.aliases) add('alias', alias, place, kin)
     for (const bare of food.firstFor) add('firstFor', bare, place, kin)
   }
-  return { foods, entries, kins, entryAt, weightAt, positions, vocabulary: [...positions.keys()].sort() }
+  return {
+    foods,
+    entries,
+    kins,
+    entryAt,
+    weightAt,
+    positions,
+    vocabulary: [...positions.keys()].sort(),
+    rarity,
+  }
 }
 
 function later(place: number): number {

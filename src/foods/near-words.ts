@@ -6,7 +6,7 @@ export interface NearWord {
   word: string
   /** letters put in, left out, changed or swapped; a half more where the word is not yet typed to its end */
   distance: number
-  /** below 0.6: how far the known word may stand for the typed one; one letter wrong 0.46-0.49, two 0.36-0.39 */
+  /** below 0.6: how far the known word may stand for the typed one; from 0.38 up it is hardly another word */
   quality: number
 }
 
@@ -25,8 +25,13 @@ function mostWrong(length: number): number {
  * Finds known words for mistyped ones. fuse.js proposes, the edit distance decides: fuse.js counts two swapped
  * letters as two faults and likes a word that merely contains the typed one. The first letter is seldom mistyped, so
  * words that share it are tried by themselves, and the others only where none of these is one letter away.
+ *
+ * @param rarity 0 for a word of a food's name, 1 for one of an alias, 3 for one of the many local names
  */
-export function createNearWords(vocabulary: readonly string[]): (typed: string) => readonly NearWord[] {
+export function createNearWords(
+  vocabulary: readonly string[],
+  rarity: (word: string) => number,
+): (typed: string) => readonly NearWord[] {
   const known = new Map<string, readonly NearWord[]>()
   const byFirstLetter = new Map<string, Fuse<string>>()
   let all: Fuse<string> | null = null
@@ -52,8 +57,12 @@ export function createNearWords(vocabulary: readonly string[]): (typed: string) 
       const begun = typed.length >= 4 ? editDistance(typed, word, most - 1, true) : most + 1
       const distance = Math.min(whole, begun + 0.5)
       if (distance > most) continue
-      const otherFirst = typed[0] === word[0] ? 0 : 0.03
-      near.push({ word, distance, quality: 0.59 - 0.1 * distance - otherFirst })
+      let quality = 0.59 - 0.1 * distance
+      // mistakes stand seldom at the beginning, and local names lie so close together that anything is like one
+      if (typed[0] !== word[0]) quality -= 0.12
+      if (distance >= 2 && typed.slice(0, 2) !== word.slice(0, 2)) quality -= 0.1
+      quality -= 0.05 * rarity(word)
+      near.push({ word, distance, quality })
     }
     return near
   }

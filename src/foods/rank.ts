@@ -86,7 +86,7 @@ function lookUp(index: FoodIndex, word: QueryWord, isLast: boolean, near: Near, 
   const isThere = index.positions.has(stem)
   if (isThere) lookups.push({ word: stem, quality: 1 })
   // only the last word is still being typed; an earlier one may be cut short if enough of it stands
-  if (isLast || stem.length >= 4) {
+  if (isLast || (!isThere && stem.length >= 4)) {
     for (const longer of wordsBeginning(index, stem)) {
       const share = stem.length / longer.length
       // a whole word goes before one that it merely begins
@@ -103,6 +103,7 @@ function lookUp(index: FoodIndex, word: QueryWord, isLast: boolean, near: Near, 
 function answer(index: FoodIndex, words: QueryWord[], near: Near, mendAll: boolean): Candidate[] {
   const { entries, kins, entryAt } = index
   const n = words.length
+  const isKnown = (stem: string): boolean => index.positions.has(stem)
   /** by entry and word of the query: how well the entry answers it */
   const inEntry = new Map<number, Float64Array>()
   const inKin = new Map<number, Float64Array>()
@@ -119,13 +120,13 @@ function answer(index: FoodIndex, words: QueryWord[], near: Near, mendAll: boole
         }
         if (quality > row[i]!) row[i] = quality
         if (quality > (cover.get(position) ?? 0)) cover.set(position, quality)
-        const { kin } = entries[entry]!
+        const { kin, isLocal } = entries[entry]!
         let kinRow = inKin.get(kin)
         if (kinRow === undefined) {
           kinRow = new Float64Array(n)
           inKin.set(kin, kinRow)
         }
-        if (quality > kinRow[i]!) kinRow[i] = quality
+        if (!isLocal && quality > kinRow[i]!) kinRow[i] = quality
       }
     }
   }
@@ -137,7 +138,7 @@ function answer(index: FoodIndex, words: QueryWord[], near: Near, mendAll: boole
     const kinRow = inKin.get(entry.kin)!
     for (const food of entry.ownOnly ? entry.owners : kins[entry.kin]!) {
       const isOwner = entry.owners.includes(food)
-      const candidate = weigh(index.foods[food]!, words, row, kinRow, entry, covered, isOwner)
+      const candidate = weigh(index.foods[food]!, words, row, kinRow, entry, covered, isOwner, isKnown)
       const present = byFood.get(food)
       if (
         present === undefined ||
@@ -173,10 +174,10 @@ function weigh(
   entry: Entry,
   covered: Covered,
   isOwner: boolean,
+  isKnown: (stem: string) => boolean,
 ): Candidate {
   let weight = 0
   let sum = 0
-  let sure = true
   let whole = true
   let inState = true
   let stateAsked = false
@@ -202,8 +203,6 @@ function weigh(
     weight += 1
     sum += quality
     if (quality === 0) whole = false
-    const found = Math.max(here, kinRow[i]!)
-    if (found < leastSure(word.stem.length)) sure = false
   }
   const asked = weight === 0 ? 0 : sum / weight
   const exact = asked > 0.97 && covered.share > 0.97
@@ -214,20 +213,41 @@ function weigh(
   if (!isOwner) text *= OF_KIN
   if (!whole) text *= 0.6
   // a bare word's own food needs no state to be meant, nor an unusual state that has a name of its own (besan)
-  const named = isOwner && (first || (exact && isUnusualState(food)))
+  const named = isOwner && (first || (isUnusualState(food) && whole && covered.share > 0.8))
   const state = stateAsked ? stateGain : named ? 0 : -0.015 * stateRank(food)
   const score = Math.max(0, text + state + everydayness(food))
+  // a part of a local name is a chance likeness
+  const isChance = entry.isLocal && covered.share < 0.6
+  const sure = !isChance && isSure(words, row, kinRow, covered.share >= 0.75 * asked, isKnown)
   return { food, score, text, whole, inState, stateAsked, sure, first, exact }
 }
 
+/** Is every word found so surely that the food may be taken without asking? A mistyped word must make up its name. */
+function isSure(
+  words: QueryWord[],
+  row: Float64Array,
+  kinRow: Float64Array,
+  isAbout: boolean,
+  isKnown: (stem: string) => boolean,
+): boolean {
+  const found = words.map((_, i) => Math.max(row[i]!, kinRow[i]!))
+  const right = found.filter(quality => quality === 1).length
+  return words.every((word, i) => {
+    if (word.states !== null || (word.weak && found[i] === 0)) return true
+    if (found[i]! < leastSure(word.stem, isKnown(word.stem), right > 0)) return false
+    return found[i]! >= BEGUN || isAbout
+  })
+}
+
 /**
- * How surely a word of so many letters must be found to be taken for what was meant: begun, with three letters or
- * more; mistyped, with one letter wrong in five, two in six and more.
+ * How surely a word must be found to be taken for what was meant. One that is known as it stands must be it; one of
+ * three letters may be unfinished; a mistyped one must be of six letters, or of five beside another that is right.
  */
-function leastSure(length: number): number {
-  if (length < 3) return 1
-  if (length < 5) return BEGUN
-  return length === 5 ? 0.455 : 0.355
+function leastSure(stem: string, isKnown: boolean, isSupported: boolean): number {
+  if (isKnown || stem.length < 3) return 1
+  if (stem.length < 5) return BEGUN
+  if (stem.length === 5) return isSupported ? 0.48 : BEGUN
+  return 0.38
 }
 
 /** Does the entry itself answer every word that is no state? A bare word must not gain by what stands elsewhere. */

@@ -48,7 +48,8 @@ export function createFinder(foods: readonly Food[]): Finder {
     const known = answers.get(key)
     if (known !== undefined) return known
     index ??= indexFoods(foods)
-    near ??= createNearWords(index.vocabulary)
+    const { rarity, vocabulary } = index
+    near ??= createNearWords(vocabulary, word => rarity.get(word)!)
     const candidates = rank(index, near, key)
     if (answers.size >= REMEMBERED) answers.clear()
     answers.set(key, candidates)

@@ -69,6 +69,47 @@ describe('every food of the table', () => {
 })
 
 test.each([
+  ...[
+    'chapati',
+    'muesli',
+    'granola',
+    'bagel',
+    'salmon',
+    'marmite',
+    'oat flour',
+    'oat milk',
+    'lentil soup',
+    'kimchi',
+  ],
+  ...[
+    'french fries',
+    'smoked tofu',
+    'roasted chickpeas',
+    'boiled egg white',
+    'seeds',
+    'butter',
+    'juice',
+    'e',
+    'pe',
+  ],
+])('%j, which the table does not have or has several of, is not taken for another food', words => {
+  const reading = foodByWords(words, finder)
+  expect(reading.ok ? reading.food.id : null).toBeNull()
+})
+
+test.each([
+  ['lentles', 'lentils-brown'],
+  ['chikpea', 'chickpeas'],
+  ['garbonzo', 'chickpeas'],
+  ['penut butter', 'peanut-butter'],
+  ['kidny beans', 'kidney-beans'],
+  ['quinuoa', 'quinoa'],
+])('a plain mistake such as %j is understood', (words, kin) => {
+  const reading = foodByWords(words, finder)
+  expect(reading.ok ? reading.food.kin : reading.problem).toBe(kin)
+})
+
+test.each([
   ['200 g lentils, boiled', 'lentils-brown-boiled', 200],
   ['1 1/2 cups cooked brown rice', 'rice-brown-boiled', null],
   ['½ cup dry red lentils', 'lentils-red-dry', null],
