@@ -1,10 +1,11 @@
-import { chmod, copyFile, mkdir, readFile, rm } from 'node:fs/promises'
+import { chmod, copyFile, mkdir, readFile, rm, writeFile } from 'node:fs/promises'
 import { build } from 'esbuild'
 
 /**
- * Bundles the program into dist/shortstave.js, with its data beside it. Everything is inside, so that the packed
- * program has no dependencies to install and a one-shot command opens one file. The screens (ink, react) stand in
- * the bundle as a lazily initialised part: commands that draw no screen never run them.
+ * Bundles the program into dist/: shortstave.js, which every command starts from, the parts that commands load when
+ * they need them, and the data. Everything is inside, so that the packed program has no dependencies to install. The
+ * parts stand in files of their own because Node compiles a module whole before it runs: with the screens and the
+ * checks in the first file, each one-shot command would start at twice the time.
  */
 const root = new URL('../../', import.meta.url)
 const at = (path: string) => new URL(path, root).pathname
@@ -14,9 +15,11 @@ const { version } = JSON.parse(await readFile(at('package.json'), 'utf8')) as { 
 await rm(at('dist'), { recursive: true, force: true })
 await mkdir(at('dist'))
 await build({
-  entryPoints: [at('src/cli/main.ts')],
-  outfile: at('dist/shortstave.js'),
+  entryPoints: { shortstave: at('src/cli/main.ts') },
+  outdir: at('dist'),
+  chunkNames: 'part-[hash]',
   bundle: true,
+  splitting: true,
   minify: true,
   format: 'esm',
   platform: 'node',
@@ -29,7 +32,6 @@ await build({
   },
   banner: {
     js: [
-      '#!/usr/bin/env node',
       // CommonJS packages in the bundle call require for Node's own modules.
       "import{createRequire as __createRequire}from'node:module';const require=__createRequire(import.meta.url);",
     ].join('\n'),
@@ -43,10 +45,21 @@ await build({
         bundler.onLoad({ filter: /.*/, namespace: 'empty' }, () => ({ contents: 'export default {}' }))
       },
     },
+    // zod brings its messages in fifty languages, a quarter of the bundle; the program speaks one.
+    {
+      name: 'one-language',
+      setup(bundler) {
+        bundler.onLoad({ filter: /zod[\\/]v4[\\/]locales[\\/]index\.js$/ }, () => ({
+          contents: "export { default as en } from './en.js'",
+        }))
+      },
+    },
   ],
   logLevel: 'warning',
 })
-await chmod(at('dist/shortstave.js'), 0o755)
+const program = at('dist/shortstave.js')
+await writeFile(program, `#!/usr/bin/env node\n${await readFile(program, 'utf8')}`)
+await chmod(program, 0o755)
 for (const file of ['foods.json', 'kitchen.json', 'sample-shelf.csv']) {
   await copyFile(at(`data/${file}`), at(`dist/${file}`))
 }

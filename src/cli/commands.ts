@@ -9,6 +9,10 @@ export const COMMANDS: Record<string, () => Promise<Command>> = {
   score: async () => (await import('./score.ts')).score,
   pair: async () => (await import('./pair.ts')).pair,
   complement: async () => (await import('./complement.ts')).complement,
+  shelf: async () => (await import('./shelf.ts')).shelf,
+  card: async () => (await import('./card.ts')).card,
+  label: async () => (await import('./label.ts')).label,
+  settings: async () => (await import('./settings.ts')).settings,
 }
 
 /** The commands in the order in which help lists them; the screens are what the program does without a command. */

@@ -1,10 +1,12 @@
 import { plainText } from '../foods/plain-text.ts'
+import { planningRefusal } from '../kitchen/conditions.ts'
 import { STAVE_NAMES } from '../nutrition/amino-acids.ts'
 import { diaasOf } from '../nutrition/diaas.ts'
 import { type Complement, complementsOf, inParts } from '../pairing/complement.ts'
 import { readArguments, readNumber } from './arguments.ts'
 import { careJson, careLines } from './care.ts'
 import { answer, type Command, jsonText, NO_ANSWER, Refusal } from './command.ts'
+import { settingsOf } from './kept-settings.ts'
 import { readPlanningPattern, readWithout } from './options.ts'
 import { chosenShelf, namedFood, shelfFoods } from './shelf-source.ts'
 import { grams, signed, wholeScore } from './text/figures.ts'
@@ -45,7 +47,10 @@ names say) that does it in portions a person eats. From the whole table, or from
       throw new Refusal('complement needs a food, such as: shortstave complement lentils-red-boiled')
     const food = namedFood(words.join(' '), world)
     const age = readNumber('--age', options.age, { least: 0, most: 120, unit: 'years' })
-    const pattern = readPlanningPattern(world.table(), options.pattern, age)
+    const settings = await settingsOf(world)
+    const pattern = readPlanningPattern(world.table(), options.pattern ?? settings.pattern, age)
+    const refusal = planningRefusal({ conditions: settings.conditions, age, pattern })
+    if (refusal !== null) throw new Refusal(refusal, NO_ANSWER)
     const count =
       readNumber('--most', options.most, { least: 1, most: 50, unit: 'partners', whole: true }) ?? 8
     const shelf =
@@ -61,8 +66,8 @@ names say) that does it in portions a person eats. From the whole table, or from
             .map(item => item.food)
     const found = complementsOf(food, partners, {
       pattern,
-      without: readWithout(options.without),
-      allow: { eggs: options.eggs, dairy: options.dairy },
+      without: [...new Set([...settings.without, ...readWithout(options.without)])],
+      allow: { eggs: options.eggs || settings.eggs, dairy: options.dairy || settings.dairy },
       count,
       perRole: 2,
     })

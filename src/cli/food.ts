@@ -23,9 +23,26 @@ food ID [--pattern ID] [--json]
   shortstave food "soy milk" --json
 
 ID is a food's id, or words that name just one food.
+
+Your own foods, from the label in your hand:
+  shortstave food add "Galley bar" --protein 20 --energy 380 --made-of "80 % pea, 20 % rice"
+  shortstave food add "Crew mix" --per 30 --protein 21 --energy 115 --made-of soy --measure "1 scoop = 30"
+  shortstave food edit own-galley-bar --protein 21
+  shortstave food remove own-galley-bar --yes
+  --per G          the grams that the label's figures are of (100)
+  --protein G, --energy KCAL, --fat G, --carbohydrate G, --fibre G, --salt G
+  --made-of TEXT   which food or mixture its protein is made of, with shares if the label gives them
+  --measure TEXT   such as "1 scoop = 30" (may be given again)
+  --contains A     allergens beyond those of its parts (may be given again)
+  --name TEXT      a new name (edit);  --yes  remove it although something uses it
+
   --pattern ID  the scoring pattern (fao-2013-over-3y)
   --json        all of the food as JSON`,
   async run(argv, world) {
+    const [verb] = argv
+    if (verb === 'add' || verb === 'edit' || verb === 'remove') {
+      return (await import('./own-food.ts')).changeOwnFoods(verb, argv.slice(1), world)
+    }
     const { options, words } = readArguments('food', { pattern: 'text', json: 'flag' }, argv)
     if (words.length === 0)
       throw new Refusal('food needs an id or words, such as: shortstave food lentils-red-dry')

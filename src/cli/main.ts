@@ -19,7 +19,7 @@ for (const stream of [process.stdout, process.stderr]) {
 
 let code: ExitCode
 try {
-  const outcome = await runCommand(process.argv.slice(2), processWorld(process))
+  const outcome = await runCommand(process.argv.slice(2), await processWorld(process))
   await write(process.stderr, outcome.err)
   await write(process.stdout, outcome.out)
   code = outcome.code

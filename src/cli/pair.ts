@@ -2,21 +2,22 @@ import type { Food } from '../foods/food.ts'
 import { plainText } from '../foods/plain-text.ts'
 import { scoreBasis } from '../foods/score.ts'
 import { createFinder, foodByWords } from '../foods/search.ts'
+import { planningRefusal, stepBack } from '../kitchen/conditions.ts'
 import { mealTargetG } from '../nutrition/targets.ts'
 import { findPairings } from '../pairing/find-pairings.ts'
 import type { Mark, Pairing, PairingAnswer, PairingProblem, ShelfFood } from '../pairing/problem.ts'
+import { DEFAULT_SETTINGS } from '../shelf/default-settings.ts'
+import type { Settings } from '../shelf/settings.ts'
 import { readArguments, readNumber } from './arguments.ts'
 import { careJson, careLines } from './care.ts'
 import { type Command, DONE, jsonText, NO_ANSWER, type Outcome, Refusal, type World } from './command.ts'
 import { scoreJson } from './json/score-json.ts'
+import { settingsOf } from './kept-settings.ts'
 import { readPlanningPattern, readWithout } from './options.ts'
 import { chosenShelf, shelfFoods } from './shelf-source.ts'
 import { wrapLines } from './text/lines.ts'
 import { liftText, plateLines } from './text/plate-lines.ts'
 import { styleOf } from './text/style.ts'
-
-const DEFAULT_TARGET_G = 35
-const DEFAULT_FOODS = 3
 
 export const pair: Command = {
   name: 'pair',
@@ -31,7 +32,7 @@ pair [--protein G] [--foods K] [--servings N] [--shelf FILE] [...]
   shortstave pair --whole-table --protein 40
 
 How much
-  --protein G      protein a serving, in grams (${DEFAULT_TARGET_G})
+  --protein G      protein a serving, in grams (35)
   --body-mass KG   or: body mass x intake / meals;  --intake G a kg and day (1.6),  --meals N a day (3)
   --servings N     servings (1); each food's grams on hand are shared among them
 From what
@@ -42,7 +43,7 @@ From what
   --without A      leave out foods with an allergen: gluten, soy, peanut, sesame ... (may be given again)
   --eggs, --dairy  allow them; otherwise plants alone
 Within what
-  --foods K        protein foods at most, 1 to 6 (${DEFAULT_FOODS})
+  --foods K        protein foods at most, 1 to 6 (3)
   --energy KCAL    at most so much energy a serving
   --mass G         at most so many grams a serving
   --pairings N     how many different pairings, 1 to 9 (3)
@@ -81,12 +82,18 @@ Within what
       )
     }
     const age = readNumber('--age', options.age, { least: 0, most: 120, unit: 'years' })
-    const pattern = readPlanningPattern(world.table(), options.pattern, age)
-    const targetG = readTarget(options)
+    const settings = await settingsOf(world)
+    const pattern = readPlanningPattern(world.table(), options.pattern ?? settings.pattern, age)
+    const refusal = planningRefusal({ conditions: settings.conditions, age, pattern })
+    if (refusal !== null) throw new Refusal(refusal, NO_ANSWER)
+    const back = stepBack(settings.conditions, age)
+    const targetG = readTarget(options, settings, back.bodyMassTargets)
     const servings =
-      readNumber('--servings', options.servings, { least: 1, most: 100, unit: 'servings', whole: true }) ?? 1
+      readNumber('--servings', options.servings, { least: 1, most: 100, unit: 'servings', whole: true }) ??
+      settings.servings
     const foodsAtMost =
-      readNumber('--foods', options.foods, { least: 1, most: 6, unit: 'foods', whole: true }) ?? DEFAULT_FOODS
+      readNumber('--foods', options.foods, { least: 1, most: 6, unit: 'foods', whole: true }) ??
+      settings.foodsAtMost
     if (options['whole-table'] && options.shelf !== undefined)
       throw new Refusal('choose one of --shelf and --whole-table')
     const named = options['whole-table'] ? null : await chosenShelf(options.shelf, world)
@@ -101,17 +108,21 @@ Within what
       servings,
       foodsAtMost,
       basis: scoreBasis(world.table(), pattern.id),
-      without: readWithout(options.without),
-      allow: { eggs: options.eggs, dairy: options.dairy },
+      without: [...new Set([...settings.without, ...readWithout(options.without)])],
+      allow: { eggs: options.eggs || settings.eggs, dairy: options.dairy || settings.dairy },
       energyAtMostKcal:
-        readNumber('--energy', options.energy, { least: 50, most: 5000, unit: 'kcal' }) ?? null,
-      massAtMostG: readNumber('--mass', options.mass, { least: 20, most: 5000, unit: 'g' }) ?? null,
+        readNumber('--energy', options.energy, { least: 50, most: 5000, unit: 'kcal' }) ??
+        settings.energyAtMostKcal,
+      massAtMostG:
+        readNumber('--mass', options.mass, { least: 20, most: 5000, unit: 'g' }) ?? settings.massAtMostG,
       pairings:
         readNumber('--pairings', options.pairings, { least: 1, most: 9, unit: 'pairings', whole: true }) ?? 3,
       market: world.table().foods,
     }
     const found = findPairings(problem)
-    return options.json ? jsonOutcome(found, problem) : textOutcome(found, problem, label, world)
+    return options.json
+      ? jsonOutcome(found, problem, back.notes)
+      : textOutcome(found, problem, label, world, back.notes)
   },
 }
 
@@ -122,25 +133,33 @@ interface TargetOptions {
   meals: string | undefined
 }
 
-function readTarget(options: TargetOptions): number {
+/** The protein of a serving: as the options say, else as the settings do. */
+function readTarget(options: TargetOptions, settings: Settings, bodyMassTargets: boolean): number {
   const plain = readNumber('--protein', options.protein, { least: 1, most: 200, unit: 'g' })
   const bodyMassKg = readNumber('--body-mass', options['body-mass'], { least: 15, most: 300, unit: 'kg' })
-  const gPerKgPerDay = readNumber('--intake', options.intake, {
-    least: 0.3,
-    most: 3.5,
-    unit: 'g per kg and day',
-  })
-  const mealsPerDay = readNumber('--meals', options.meals, { least: 1, most: 10, unit: 'meals', whole: true })
-  if (bodyMassKg === undefined) {
-    if (gPerKgPerDay !== undefined || mealsPerDay !== undefined) {
-      throw new Refusal(
-        '--intake and --meals need --body-mass KG; or give the grams of a meal with --protein',
-      )
-    }
-    return plain ?? DEFAULT_TARGET_G
+  const intake = readNumber('--intake', options.intake, { least: 0.3, most: 3.5, unit: 'g per kg and day' })
+  const meals = readNumber('--meals', options.meals, { least: 1, most: 10, unit: 'meals', whole: true })
+  if (plain !== undefined && bodyMassKg !== undefined)
+    throw new Refusal('choose one of --protein and --body-mass')
+  if (plain !== undefined) return plain
+  const asksMass = bodyMassKg !== undefined || intake !== undefined || meals !== undefined
+  const mass = bodyMassKg ?? settings.bodyMassKg
+  if (!asksMass && (settings.targetG !== null || mass === null))
+    return settings.targetG ?? DEFAULT_SETTINGS.targetG!
+  if (mass === null) {
+    throw new Refusal('--intake and --meals need --body-mass KG; or give the grams of a meal with --protein')
   }
-  if (plain !== undefined) throw new Refusal('choose one of --protein and --body-mass')
-  return mealTargetG({ bodyMassKg, gPerKgPerDay: gPerKgPerDay ?? 1.6, mealsPerDay: mealsPerDay ?? 3 })
+  if (!bodyMassTargets) {
+    throw new Refusal(
+      'no target is worked out from body mass with what your settings tell; give grams with --protein, as your doctor or dietitian says',
+      NO_ANSWER,
+    )
+  }
+  return mealTargetG({
+    bodyMassKg: mass,
+    gPerKgPerDay: intake ?? settings.gPerKgPerDay,
+    mealsPerDay: meals ?? settings.mealsPerDay,
+  })
 }
 
 /** The shelf with the marks of the command line set on the foods that they name. */
@@ -165,7 +184,9 @@ function marked(shelf: ShelfFood[], useUp: string[], holdBack: string[], label: 
   return shelf.map(item => ({ ...item, mark: marks.get(item.food) ?? item.mark }))
 }
 
-function jsonOutcome(found: PairingAnswer, problem: PairingProblem): Outcome {
+type Notes = readonly { id: string; text: string; source: string }[]
+
+function jsonOutcome(found: PairingAnswer, problem: PairingProblem, notes: Notes): Outcome {
   const out = jsonText({
     target_g: problem.targetG,
     servings: problem.servings,
@@ -186,11 +207,18 @@ function jsonOutcome(found: PairingAnswer, problem: PairingProblem): Outcome {
             },
     })),
     reason: found.reason,
+    notes,
   })
   return { code: found.reached ? DONE : NO_ANSWER, out, err: '' }
 }
 
-function textOutcome(found: PairingAnswer, problem: PairingProblem, label: string, world: World): Outcome {
+function textOutcome(
+  found: PairingAnswer,
+  problem: PairingProblem,
+  label: string,
+  world: World,
+  notes: Notes,
+): Outcome {
   const style = styleOf(world.colour)
   const { columns } = world
   const wanted = `${Math.round(problem.targetG)} g protein a serving`
@@ -210,7 +238,7 @@ function textOutcome(found: PairingAnswer, problem: PairingProblem, label: strin
     lines.push('')
   })
   const foods = found.pairings.flatMap(({ portions }) => portions.map(({ food }) => food))
-  lines.push(...careLines(foods, columns))
+  lines.push(...notes.flatMap(({ text }) => wrapLines(text, columns, 2)), ...careLines(foods, columns))
   return { code: found.reached ? DONE : NO_ANSWER, out: `${lines.join('\n')}\n`, err: '' }
 }
 

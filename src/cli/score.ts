@@ -43,7 +43,7 @@ stderr. "-" reads portions from standard input, one a line.
 }
 
 /** The portions as the arguments give them; `-` stands for standard input, one a line. */
-async function portionTexts(words: string[], world: World): Promise<string[]> {
+export async function portionTexts(words: string[], world: World): Promise<string[]> {
   const texts: string[] = []
   for (const word of words) {
     if (word === '-')
@@ -57,7 +57,8 @@ async function portionTexts(words: string[], world: World): Promise<string[]> {
   return texts
 }
 
-function readPortions(texts: string[], world: World): { portions: Portion<Food>[]; echoes: string[] } {
+/** What the texts mean, or a refusal of the first that is not understood. */
+export function readPortions(texts: string[], world: World): { portions: Portion<Food>[]; echoes: string[] } {
   const portions: Portion<Food>[] = []
   const echoes: string[] = []
   for (const text of texts) {

@@ -7,6 +7,7 @@ import type { ShelfFood } from '../pairing/problem.ts'
 import { readShelfFile } from '../shelf/import-export.ts'
 import type { Shelf } from '../shelf/shelf.ts'
 import { Refusal, type World } from './command.ts'
+import { anythingKept, openStore } from './kept.ts'
 
 /** The shelf a command works on, and how to call it in a sentence. */
 export interface NamedShelf {
@@ -42,17 +43,18 @@ export function sampleShelf(world: World): Shelf {
   return shelfFromText(readFileSync(dataFile('sample-shelf.csv'), 'utf8'), 'sample shelf', world)
 }
 
-/** What the cook keeps in the store, or null while nothing has been put there. */
-async function keptShelf(_world: World): Promise<NamedShelf | null> {
-  return null
+/** What the cook keeps, or null while nothing has been put there. */
+async function keptShelf(world: World): Promise<NamedShelf | null> {
+  if (!anythingKept(world.env)) return null
+  const { document } = await (await openStore(world.env)).read()
+  return document.begun ? { shelf: document.shelf, label: 'your shelf' } : null
 }
 
-/** A shelf's items with their foods, for the combiner. */
+/** A shelf's items with their foods, for the combiner; a food that is no longer in the table is passed over. */
 export function shelfFoods(shelf: Shelf, world: World): ShelfFood[] {
-  return shelf.items.map(item => {
+  return shelf.items.flatMap((item): ShelfFood[] => {
     const food = world.table().foodById.get(item.food)
-    if (food === undefined) throw new Refusal(`the shelf holds "${item.food}", which is not in the table`)
-    return { food, onHandG: item.grams, mark: item.mark }
+    return food === undefined ? [] : [{ food, onHandG: item.grams, mark: item.mark }]
   })
 }
 

@@ -4,14 +4,20 @@ import { plainText } from '../foods/plain-text.ts'
 import { createFinder, type Finder } from '../foods/search.ts'
 import type { Table } from '../foods/table.ts'
 import { Refusal, type World } from './command.ts'
+import { ownFoodsKept } from './kept.ts'
 
 /** The largest file or standard input that is read: far more than any shelf. */
 const READ_AT_MOST_BYTES = 5_000_000
 
 const TOO_LARGE = `larger than ${READ_AT_MOST_BYTES / 1_000_000} MB, which no shelf is; give a smaller file`
 
-/** The real world: this process, its files and its terminal. The table and the finder are made once, when first asked for. */
-export function processWorld(process: NodeJS.Process): World {
+/**
+ * The real world: this process, its files and its terminal. The table and the finder are made once, when first asked
+ * for; foods from packets, where the cook keeps any, stand behind the table's rows.
+ */
+export async function processWorld(process: NodeJS.Process): Promise<World> {
+  const own = ownFoodsKept(process.env) ? await import('./own-foods.ts') : null
+  const kept = own === null ? [] : await own.keptOwnFoods(process.env)
   let table: Table | undefined
   let finder: Finder | undefined
   const world: World = {
@@ -24,7 +30,7 @@ export function processWorld(process: NodeJS.Process): World {
     readFile: readTextFile,
     writeFile: writeTextFile,
     table: () => {
-      table ??= loadTable()
+      table ??= own === null ? loadTable() : own.tableWith(loadTable(), kept)
       return table
     },
     finder: () => {

@@ -1,6 +1,6 @@
 import type { Food } from './food.ts'
 import { statesOf } from './state-words.ts'
-import { isStopWord, wordsOf } from './words.ts'
+import { isStopWord, stemsOf, writtenWords } from './words.ts'
 
 /** A name by which foods of one kin are known. */
 export interface Entry {
@@ -22,6 +22,17 @@ export interface Entry {
   weight: number
 }
 
+/** A word that stands in the names of foods. */
+export interface KnownWord {
+  stem: string
+  isStop: boolean
+  isState: boolean
+  /** 0 if it stands in a food's name or bare words, 1 in an alias, 3 only in local names */
+  rarity: number
+  /** the positions at which it stands */
+  at: number[]
+}
+
 /** The names and aliases of foods, word by word. */
 export interface FoodIndex {
   foods: readonly Food[]
@@ -30,17 +41,13 @@ export interface FoodIndex {
   /** by position: which entry the word belongs to, and how much of its name it is */
   entryAt: number[]
   weightAt: number[]
-  /** by word: the positions at which it stands */
-  positions: Map<string, number[]>
-  /** every word, sorted, for finding beginnings */
-  vocabulary: string[]
-  /** by word: 0 if it stands in a food's name or bare words, 1 in an alias, 3 only in local names */
-  rarity: Map<string, number>
+  /** by stem; stop words are not among them */
+  words: Map<string, KnownWord>
 }
 
 /** The local names of the Indian table begin with a capital, the aliases that cooks everywhere know do not. */
 const LOCAL = 3
-const LOCAL_NAME = /^\p{Lu}/u
+const NOT_YET = 9
 
 const FIRST_PART = 1
 const LATER_PARTS = [0.25, 0.15, 0.1]
@@ -48,60 +55,84 @@ const IN_BRACKETS = 0.08
 /** a state is looked at by itself: the name's own mention of it hardly counts */
 const STATE_WORD = 0.02
 
+/**
+ * Indexes foods by the words of their names. A one-shot command waits for this once, in code that no compiler has
+ * warmed up: hence one look-up a written word, and no pattern where a character will do.
+ */
 export function indexFoods(foods: readonly Food[]): FoodIndex {
   const entries: Entry[] = []
   const kins: number[][] = []
   const kinByName = new Map<string, number>()
   const entryAt: number[] = []
   const weightAt: number[] = []
-  const positions = new Map<string, number[]>()
-  const rarity = new Map<string, number>()
+  const words = new Map<string, KnownWord>()
+  const wordsByWritten = new Map<string, KnownWord[]>()
   /** by kin, then by text */
-  const aliases: Map<string, Entry>[] = []
+  const bearers: Map<string, Entry>[] = []
+
+  function knownWords(written: string): KnownWord[] {
+    const before = wordsByWritten.get(written)
+    if (before !== undefined) return before
+    const known = stemsOf(written).map(stem => {
+      let word = words.get(stem)
+      if (word === undefined) {
+        const isStop = isStopWord(stem)
+        word = { stem, isStop, isState: statesOf(stem) !== null, rarity: NOT_YET, at: [] }
+        if (!isStop) words.set(stem, word)
+      }
+      return word
+    })
+    wordsByWritten.set(written, known)
+    return known
+  }
+
+  /** Adds the words of one part of a name: the first, a later one, or what is in brackets. */
+  function addPart(entry: Entry, place: number, part: string, partWeight: number, rarity: number): void {
+    for (const written of writtenWords(part)) {
+      for (const word of knownWords(written)) {
+        const { at } = word
+        if (word.isStop || (at.length > 0 && at[at.length - 1]! >= entry.from)) continue
+        const position = entryAt.length
+        at.push(position)
+        if (rarity < word.rarity) word.rarity = rarity
+        if (word.isState && entry.kind === 'alias') entry.ownOnly = true
+        if (partWeight === FIRST_PART) entry.head = position
+        const weight = word.isState && partWeight !== FIRST_PART ? STATE_WORD : partWeight
+        entryAt.push(place)
+        weightAt.push(weight)
+        entry.weight += weight
+        entry.length++
+      }
+    }
+  }
 
   function add(kind: Entry['kind'], text: string, food: number, kin: number): void {
-    const rare = kind !== 'alias' ? 0 : LOCAL_NAME.test(text) ? LOCAL : 1
-    const present = kind === 'name' ? undefined : aliases[kin]!.get(text)
+    const present = kind === 'name' ? undefined : bearers[kin]!.get(text)
     if (present !== undefined && present.kind === kind) {
       if (!present.owners.includes(food)) present.owners.push(food)
       return
     }
+    const isLocal = kind === 'alias' && beginsWithCapital(text)
+    const rarity = kind !== 'alias' ? 0 : isLocal ? LOCAL : 1
     const from = entryAt.length
+    const ownOnly = kind === 'name'
     const entry: Entry = {
       kind,
       owners: [food],
       kin,
-      isLocal: rare === LOCAL,
-      ownOnly: kind === 'name',
+      isLocal,
+      ownOnly,
       from,
       length: 0,
       head: from,
       weight: 0,
     }
-    const seen: string[] = []
-    for (const [place, part] of partsOf(text).entries()) {
-      for (const word of wordsOf(part.text)) {
-        if (isStopWord(word) || seen.includes(word)) continue
-        seen.push(word)
-        if (rare < (rarity.get(word) ?? 9)) rarity.set(word, rare)
-        const isState = statesOf(word) !== null
-        const weight =
-          place === 0 ? FIRST_PART : isState ? STATE_WORD : part.bracketed ? IN_BRACKETS : later(place)
-        if (isState && kind === 'alias') entry.ownOnly = true
-        const position = entryAt.length
-        if (place === 0) entry.head = position
-        entryAt.push(entries.length)
-        weightAt.push(weight)
-        entry.weight += weight
-        entry.length++
-        const known = positions.get(word)
-        if (known === undefined) positions.set(word, [position])
-        else known.push(position)
-      }
-    }
+    const place = entries.length
+    if (!text.includes(',') && !text.includes('(')) addPart(entry, place, text, FIRST_PART, rarity)
+    else for (const part of partsOf(text)) addPart(entry, place, part.text, part.weight, rarity)
     if (entry.length === 0) return
     entries.push(entry)
-    if (kind !== 'name') aliases[kin]!.set(text, entry)
+    if (kind !== 'name') bearers[kin]!.set(text, entry)
   }
 
   for (const [place, food] of foods.entries()) {
@@ -110,52 +141,41 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
       kin = kins.length
       kinByName.set(food.kin, kin)
       kins.push([])
-      aliases.push(new Map())
+      bearers.push(new Map())
     }
     kins[kin]!.push(place)
     add('name', food.name, place, kin)
     for (const alias of food.aliases) add('alias', alias, place, kin)
     for (const bare of food.firstFor) add('firstFor', bare, place, kin)
   }
-  return {
-    foods,
-    entries,
-    kins,
-    entryAt,
-    weightAt,
-    positions,
-    vocabulary: [...positions.keys()].sort(),
-    rarity,
-  }
+  return { foods, entries, kins, entryAt, weightAt, words }
 }
 
-function later(place: number): number {
-  return LATER_PARTS[place - 1] ?? LATER_PARTS.at(-1)!
+function beginsWithCapital(text: string): boolean {
+  const code = text.charCodeAt(0)
+  return code > 127 ? /^\p{Lu}/u.test(text) : code >= 65 && code <= 90
 }
 
-/** The parts of a name between its commas, and what it says in brackets. */
-function partsOf(text: string): { text: string; bracketed: boolean }[] {
-  if (!/[,(]/.test(text)) return [{ text, bracketed: false }]
-  const parts: { text: string; bracketed: boolean }[] = []
+/** The parts of a name between its commas and what it says in brackets, with what a word in each weighs. */
+function partsOf(text: string): { text: string; weight: number }[] {
+  const parts: { text: string; weight: number }[] = []
   for (const match of text.matchAll(/\(([^)]*)\)?|([^,(]+)/g)) {
-    const bracketed = match[1] !== undefined
-    parts.push({ text: match[1] ?? match[2]!, bracketed })
+    const place = parts.length
+    const later = LATER_PARTS[place - 1] ?? LATER_PARTS.at(-1)!
+    const isBracketed = match[1] !== undefined
+    parts.push({
+      text: match[1] ?? match[2]!,
+      weight: place === 0 ? FIRST_PART : isBracketed ? IN_BRACKETS : later,
+    })
   }
   return parts
 }
 
 /** The words of the index that begin with `beginning` and go on after it. */
-export function wordsBeginning(index: FoodIndex, beginning: string): string[] {
-  const { vocabulary } = index
-  let low = 0
-  let high = vocabulary.length
-  while (low < high) {
-    const middle = (low + high) >> 1
-    if (vocabulary[middle]! < beginning) low = middle + 1
-    else high = middle
+export function wordsBeginning(index: FoodIndex, beginning: string): KnownWord[] {
+  const longer: KnownWord[] = []
+  for (const word of index.words.values()) {
+    if (word.stem.length > beginning.length && word.stem.startsWith(beginning)) longer.push(word)
   }
-  const words: string[] = []
-  for (let i = low; i < vocabulary.length && vocabulary[i]!.startsWith(beginning); i++)
-    if (vocabulary[i] !== beginning) words.push(vocabulary[i]!)
-  return words
+  return longer
 }

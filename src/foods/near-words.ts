@@ -29,7 +29,7 @@ function mostWrong(length: number): number {
  * @param rarity 0 for a word of a food's name, 1 for one of an alias, 3 for one of the many local names
  */
 export function createNearWords(
-  vocabulary: readonly string[],
+  vocabulary: () => readonly string[],
   rarity: (word: string) => number,
 ): (typed: string) => readonly NearWord[] {
   const known = new Map<string, readonly NearWord[]>()
@@ -44,7 +44,7 @@ export function createNearWords(
   function sharingFirstLetter(letter: string): Fuse<string> {
     let fuse = byFirstLetter.get(letter)
     if (fuse === undefined) {
-      fuse = fuseOf(vocabulary.filter(word => word[0] === letter))
+      fuse = fuseOf(vocabulary().filter(word => word[0] === letter))
       byFirstLetter.set(letter, fuse)
     }
     return fuse
@@ -74,7 +74,7 @@ export function createNearWords(
     if (most === 0 || typed.length > LONGEST) return []
     let near = propose(typed, most, sharingFirstLetter(typed[0]!))
     if (!near.some(({ distance }) => distance <= 1.5)) {
-      all ??= fuseOf(vocabulary)
+      all ??= fuseOf(vocabulary())
       near = propose(typed, most, all)
     }
     near = near.sort((a, b) => b.quality - a.quality || (a.word < b.word ? -1 : 1)).slice(0, 40)

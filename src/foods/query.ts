@@ -55,7 +55,7 @@ export function otherSpellings(words: QueryWord[], isKnown: (stem: string) => bo
     if (next !== undefined && isKnown(stem + next.stem)) {
       others.push([...words.slice(0, i), plain(stem + next.stem), ...words.slice(i + 2)])
     }
-    if (isKnown(stem)) continue
+    if (isKnown(stem) || words[i]!.states !== null) continue
     for (let cut = stem.length - 3; cut >= 3; cut--) {
       const [front, back] = [stem.slice(0, cut), stem.slice(cut)]
       if (isKnown(front) && isKnown(back)) {

@@ -46,7 +46,7 @@ const STATE_WEIGHT = 0.5
 export function rank(index: FoodIndex, near: Near, query: string): Candidate[] {
   const words = readQuery(query)
   if (words.length === 0) return []
-  const isKnown = (stem: string): boolean => index.positions.has(stem)
+  const isKnown = (stem: string): boolean => index.words.has(stem)
   let found = best(index, [words, ...otherSpellings(words, isKnown)], near, false)
   if (!found.some(candidate => candidate.whole)) {
     const mended = best(index, [words], near, true)
@@ -83,11 +83,11 @@ function best(index: FoodIndex, queries: QueryWord[][], near: Near, mendAll: boo
 function lookUp(index: FoodIndex, word: QueryWord, isLast: boolean, near: Near, mendAll: boolean): Lookup[] {
   const { stem } = word
   const lookups: Lookup[] = []
-  const isThere = index.positions.has(stem)
+  const isThere = index.words.has(stem)
   if (isThere) lookups.push({ word: stem, quality: 1 })
   // only the last word is still being typed; an earlier one may be cut short if enough of it stands
   if (isLast || (!isThere && stem.length >= 4)) {
-    for (const longer of wordsBeginning(index, stem)) {
+    for (const { stem: longer } of wordsBeginning(index, stem)) {
       const share = stem.length / longer.length
       // a whole word goes before one that it merely begins
       const least = isThere ? BEGUN : isLast ? 0.82 : 0.72
@@ -103,7 +103,7 @@ function lookUp(index: FoodIndex, word: QueryWord, isLast: boolean, near: Near, 
 function answer(index: FoodIndex, words: QueryWord[], near: Near, mendAll: boolean): Candidate[] {
   const { entries, kins, entryAt } = index
   const n = words.length
-  const isKnown = (stem: string): boolean => index.positions.has(stem)
+  const isKnown = (stem: string): boolean => index.words.has(stem)
   /** by entry and word of the query: how well the entry answers it */
   const inEntry = new Map<number, Float64Array>()
   const inKin = new Map<number, Float64Array>()
@@ -111,7 +111,7 @@ function answer(index: FoodIndex, words: QueryWord[], near: Near, mendAll: boole
   const cover = new Map<number, number>()
   for (const [i, word] of words.entries()) {
     for (const { word: known, quality } of lookUp(index, word, i === n - 1, near, mendAll)) {
-      for (const position of index.positions.get(known) ?? []) {
+      for (const position of index.words.get(known)?.at ?? []) {
         const entry = entryAt[position]!
         let row = inEntry.get(entry)
         if (row === undefined) {

@@ -3,7 +3,9 @@ import { type FoodIndex, indexFoods } from './food-index.ts'
 import { markedRanges } from './marked-ranges.ts'
 import { createNearWords } from './near-words.ts'
 import { plainText } from './plain-text.ts'
+import { readQuery } from './query.ts'
 import { type Candidate, rank } from './rank.ts'
+import { foodsWithSameBeginnings } from './same-beginnings.ts'
 import { fold } from './words.ts'
 
 export interface FindOptions {
@@ -21,7 +23,7 @@ export interface Hit {
   matched: [start: number, end: number][]
 }
 
-/** The search over one list of foods. Its index is made at the first search that needs it. */
+/** The search over one list of foods. Its index is made when it is first needed. */
 export interface Finder {
   foods: readonly Food[]
   /** the food of that id, if it is one of `foods` */
@@ -36,24 +38,57 @@ export type FoodReading = { ok: true; food: Food } | { ok: false; problem: strin
 
 const DEFAULT_LIMIT = 20
 const REMEMBERED = 200
+/** A command asks a few times and ends; who asks more often is typing, and is served faster by the whole index. */
+const QUICK_SEARCHES = 8
 
 export function createFinder(foods: readonly Food[]): Finder {
   let index: FoodIndex | null = null
   let near: ReturnType<typeof createNearWords> | null = null
   let byId: Map<string, Food> | null = null
   const answers = new Map<string, readonly Candidate[]>()
+  let quickSearches = 0
 
   function weigh(words: string): readonly Candidate[] {
     const key = words.slice(0, 400)
-    const known = answers.get(key)
-    if (known !== undefined) return known
-    index ??= indexFoods(foods)
-    const { rarity, vocabulary } = index
-    near ??= createNearWords(vocabulary, word => rarity.get(word)!)
-    const candidates = rank(index, near, key)
+    const before = answers.get(key)
+    if (before !== undefined) return before
+    const candidates = weighAmongFew(key) ?? rankAmongAll(key)
     if (answers.size >= REMEMBERED) answers.clear()
     answers.set(key, candidates)
     return candidates
+  }
+
+  /** The same answer from a small index of the foods that come into question, or null where it takes the whole one. */
+  function weighAmongFew(words: string): readonly Candidate[] | null {
+    if (index !== null || quickSearches >= QUICK_SEARCHES) return null
+    quickSearches++
+    const few = foodsWithSameBeginnings(
+      foods,
+      readQuery(words)
+        .filter(word => word.states === null)
+        .map(word => word.stem),
+    )
+    if (few === null) return null
+    let isMistyped = false
+    const candidates = rank(
+      indexFoods(few),
+      () => {
+        isMistyped = true
+        return []
+      },
+      words,
+    )
+    return isMistyped || !candidates[0]?.whole ? null : candidates
+  }
+
+  function rankAmongAll(words: string): readonly Candidate[] {
+    index ??= indexFoods(foods)
+    const known = index.words
+    near ??= createNearWords(
+      () => [...known.keys()],
+      word => known.get(word)!.rarity,
+    )
+    return rank(index, near, words)
   }
 
   return {

@@ -121,17 +121,21 @@ export interface Word {
   end: number
 }
 
-const stemsByWritten = new Map<string, readonly string[]>()
-
 /** The word, or the two words, that a folded word is compared as. */
-function stemsOf(written: string): readonly string[] {
-  const known = stemsByWritten.get(written)
-  if (known !== undefined) return known
+export function stemsOf(written: string): readonly string[] {
   const one = singular(written)
-  const made = (SPELLINGS.get(one) ?? one).split(' ')
-  // queries are anyone's text: the memory must not grow with them
-  if (stemsByWritten.size < 20_000) stemsByWritten.set(written, made)
-  return made
+  const spelled = SPELLINGS.get(one)
+  return spelled === undefined ? [one] : spelled.split(' ')
+}
+
+/** The singulars of written words that may be compared as this stem, or as a longer one that it begins. */
+export function writtenAs(stem: string): string[] {
+  const written = [stem]
+  for (const [word, spelled] of SPELLINGS) {
+    if (spelled.split(' ').some(one => one.startsWith(stem))) written.push(word)
+  }
+  for (const [plural, one] of IRREGULAR) if (one.startsWith(stem)) written.push(plural)
+  return written
 }
 
 /**
@@ -142,9 +146,7 @@ function stemsOf(written: string): readonly string[] {
 export function wordsOf(text: string): string[] {
   const words: string[] = []
   for (const written of writtenWords(text)) {
-    const stems = stemsOf(written)
-    if (stems.length === 1) words.push(stems[0]!)
-    else words.push(...stems)
+    words.push(...stemsOf(written))
   }
   return words
 }
@@ -153,7 +155,7 @@ export function wordsOf(text: string): string[] {
  * The runs of letters and digits of a text, folded. Thousands of aliases pass here before a first search is answered,
  * nearly all in plain ASCII, which needs no pattern.
  */
-function writtenWords(text: string): string[] {
+export function writtenWords(text: string): string[] {
   const lower = text.toLowerCase()
   const words: string[] = []
   let start = -1

@@ -18,6 +18,7 @@ export const shelfChangeSchema = z.discriminatedUnion('do', [
     do: z.literal('set'),
     food,
     grams: grams.optional(),
+    mark: z.enum(MARKS).optional(),
     useBy: daySchema.nullable().optional(),
     note: z.string().max(500).optional(),
   }),
@@ -57,6 +58,7 @@ export function applyChange(shelf: Shelf, change: ShelfChange): Changed {
       return changed(shelf, at, {
         ...item,
         grams: change.grams ?? item.grams,
+        mark: change.mark ?? item.mark,
         useBy: change.useBy === undefined ? item.useBy : change.useBy,
         note: change.note ?? item.note,
       })

@@ -1,5 +1,6 @@
 import Conf from 'conf'
-import { DEFAULT_SETTINGS, type Settings, settingsSchema } from './settings.ts'
+import { DEFAULT_SETTINGS } from './default-settings.ts'
+import { type Settings, settingsSchema } from './settings.ts'
 
 /** Settings as read, and one line for the cook where they could not be read or written. */
 export interface KeptSettings {

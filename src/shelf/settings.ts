@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { ALLERGEN_IDS } from '../foods/allergens.ts'
-import { DEFAULT_PATTERN, PATTERN_IDS } from '../nutrition/pattern.ts'
+import { PATTERN_IDS } from '../nutrition/pattern.ts'
+import { DEFAULT_SETTINGS } from './default-settings.ts'
 
 /** Conditions of the eater that the cook may tell of; nothing is assumed. */
 export const CONDITIONS = [
@@ -15,23 +16,21 @@ export const CONDITIONS = [
 
 /** What the bench is set to. `targetG` (plain grams) wins over body mass. Null: not set. */
 export const settingsSchema = z.object({
-  targetG: z.number().min(1).max(200).nullable().default(35),
-  bodyMassKg: z.number().min(15).max(300).nullable().default(null),
-  gPerKgPerDay: z.number().min(0.3).max(3.5).default(1.6),
-  mealsPerDay: z.number().int().min(1).max(10).default(3),
-  servings: z.number().int().min(1).max(100).default(1),
-  foodsAtMost: z.number().int().min(1).max(6).default(3),
-  pattern: z.enum(PATTERN_IDS).default(DEFAULT_PATTERN),
-  without: z.array(z.enum(ALLERGEN_IDS)).default([]),
-  eggs: z.boolean().default(false),
-  dairy: z.boolean().default(false),
-  energyAtMostKcal: z.number().min(50).max(5000).nullable().default(null),
-  massAtMostG: z.number().min(20).max(5000).nullable().default(null),
-  units: z.enum(['metric', 'us']).default('metric'),
-  conditions: z.array(z.enum(CONDITIONS)).default([]),
+  targetG: z.number().min(1).max(200).nullable().default(DEFAULT_SETTINGS.targetG),
+  bodyMassKg: z.number().min(15).max(300).nullable().default(DEFAULT_SETTINGS.bodyMassKg),
+  gPerKgPerDay: z.number().min(0.3).max(3.5).default(DEFAULT_SETTINGS.gPerKgPerDay),
+  mealsPerDay: z.number().int().min(1).max(10).default(DEFAULT_SETTINGS.mealsPerDay),
+  servings: z.number().int().min(1).max(100).default(DEFAULT_SETTINGS.servings),
+  foodsAtMost: z.number().int().min(1).max(6).default(DEFAULT_SETTINGS.foodsAtMost),
+  pattern: z.enum(PATTERN_IDS).default(DEFAULT_SETTINGS.pattern),
+  without: z.array(z.enum(ALLERGEN_IDS)).default(DEFAULT_SETTINGS.without),
+  eggs: z.boolean().default(DEFAULT_SETTINGS.eggs),
+  dairy: z.boolean().default(DEFAULT_SETTINGS.dairy),
+  energyAtMostKcal: z.number().min(50).max(5000).nullable().default(DEFAULT_SETTINGS.energyAtMostKcal),
+  massAtMostG: z.number().min(20).max(5000).nullable().default(DEFAULT_SETTINGS.massAtMostG),
+  units: z.enum(['metric', 'us']).default(DEFAULT_SETTINGS.units),
+  conditions: z.array(z.enum(CONDITIONS)).default(DEFAULT_SETTINGS.conditions),
   /** the day on which vitamin B12 was last mentioned */
-  lastB12Day: z.iso.date().nullable().default(null),
+  lastB12Day: z.iso.date().nullable().default(DEFAULT_SETTINGS.lastB12Day),
 })
 export type Settings = z.infer<typeof settingsSchema>
-
-export const DEFAULT_SETTINGS: Settings = settingsSchema.parse({})

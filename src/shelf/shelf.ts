@@ -1,7 +1,7 @@
 import { z } from 'zod'
+import { MARKS } from './marks.ts'
 
-/** Marks a cook puts on a shelf food: to be used up soon, or held back from pairings. */
-export const MARKS = ['', 'use-up', 'hold-back'] as const
+export { MARKS } from './marks.ts'
 
 /** A calendar day, YYYY-MM-DD. */
 export const daySchema = z.iso.date()
