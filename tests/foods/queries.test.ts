@@ -31,6 +31,22 @@ describe('what cooks type, on the whole table', () => {
   })
 })
 
+test('the first searches of a command, answered from few foods, are answered as from all', () => {
+  const words = QUERIES.flatMap(([query]) => [
+    query,
+    query.slice(0, 5),
+    `${query} boiled`,
+    query.toUpperCase(),
+  ])
+  const all = createFinder(table.foods)
+  // a beginning of one letter needs the whole index, which then answers all that follows
+  all.find('a')
+  for (const query of words) {
+    const quick = createFinder(table.foods).weigh(query)
+    expect([query, quick]).toEqual([query, all.weigh(query)])
+  }
+})
+
 describe('every food of the table', () => {
   test('comes first for its own name and its own id, and is taken for neither more nor less', () => {
     for (const food of table.foods) {
