@@ -66,53 +66,64 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
   const entryAt: number[] = []
   const weightAt: number[] = []
   const words = new Map<string, KnownWord>()
-  const wordsByWritten = new Map<string, KnownWord[]>()
+  /** a written word is nearly always one stem */
+  const wordsByWritten = new Map<string, KnownWord | KnownWord[]>()
   /** by kin, then by text */
   const bearers: Map<string, Entry>[] = []
 
-  function knownWords(written: string): KnownWord[] {
-    const before = wordsByWritten.get(written)
-    if (before !== undefined) return before
-    const known = stemsOf(written).map(stem => {
-      let word = words.get(stem)
-      if (word === undefined) {
-        const isStop = isStopWord(stem)
-        word = { stem, isStop, isState: statesOf(stem) !== null, rarity: NOT_YET, at: [] }
-        if (!isStop) words.set(stem, word)
-      }
-      return word
-    })
-    wordsByWritten.set(written, known)
+  function knownWord(stem: string): KnownWord {
+    let word = words.get(stem)
+    if (word === undefined) {
+      const isStop = isStopWord(stem)
+      word = { stem, isStop, isState: statesOf(stem) !== null, rarity: NOT_YET, at: [] }
+      if (!isStop) words.set(stem, word)
+    }
+    return word
+  }
+
+  function knownWords(written: string): KnownWord | KnownWord[] {
+    let known = wordsByWritten.get(written)
+    if (known === undefined) {
+      const stems = stemsOf(written)
+      known = stems.length === 1 ? knownWord(stems[0]!) : stems.map(knownWord)
+      wordsByWritten.set(written, known)
+    }
     return known
+  }
+
+  function addWord(entry: Entry, place: number, word: KnownWord, partWeight: number, rarity: number): void {
+    const { at } = word
+    if (word.isStop || (at.length > 0 && at[at.length - 1]! >= entry.from)) return
+    const position = entryAt.length
+    at.push(position)
+    if (rarity < word.rarity) word.rarity = rarity
+    if (word.isState && entry.kind === 'alias') entry.ownOnly = true
+    if (partWeight === FIRST_PART) entry.head = position
+    const weight = word.isState && partWeight !== FIRST_PART ? STATE_WORD : partWeight
+    entryAt.push(place)
+    weightAt.push(weight)
+    entry.weight += weight
+    entry.length++
   }
 
   /** Adds the words of one part of a name: the first, a later one, or what is in brackets. */
   function addPart(entry: Entry, place: number, part: string, partWeight: number, rarity: number): void {
     for (const written of writtenWords(part)) {
-      for (const word of knownWords(written)) {
-        const { at } = word
-        if (word.isStop || (at.length > 0 && at[at.length - 1]! >= entry.from)) continue
-        const position = entryAt.length
-        at.push(position)
-        if (rarity < word.rarity) word.rarity = rarity
-        if (word.isState && entry.kind === 'alias') entry.ownOnly = true
-        if (partWeight === FIRST_PART) entry.head = position
-        const weight = word.isState && partWeight !== FIRST_PART ? STATE_WORD : partWeight
-        entryAt.push(place)
-        weightAt.push(weight)
-        entry.weight += weight
-        entry.length++
-      }
+      const known = knownWords(written)
+      if (Array.isArray(known)) for (const word of known) addWord(entry, place, word, partWeight, rarity)
+      else addWord(entry, place, known, partWeight, rarity)
     }
   }
 
   function add(kind: Entry['kind'], text: string, food: number, kin: number): void {
-    const present = kind === 'name' ? undefined : bearers[kin]!.get(text)
+    const isLocal = kind === 'alias' && beginsWithCapital(text)
+    // names are each food's own, and the table gives local names to one state of a kin only
+    const isShared = kind !== 'name' && !isLocal
+    const present = isShared ? bearers[kin]!.get(text) : undefined
     if (present !== undefined && present.kind === kind) {
       if (!present.owners.includes(food)) present.owners.push(food)
       return
     }
-    const isLocal = kind === 'alias' && beginsWithCapital(text)
     const rarity = kind !== 'alias' ? 0 : isLocal ? LOCAL : 1
     const from = entryAt.length
     const ownOnly = kind === 'name'
@@ -132,7 +143,7 @@ export function indexFoods(foods: readonly Food[]): FoodIndex {
     else for (const part of partsOf(text)) addPart(entry, place, part.text, part.weight, rarity)
     if (entry.length === 0) return
     entries.push(entry)
-    if (kind !== 'name') bearers[kin]!.set(text, entry)
+    if (isShared) bearers[kin]!.set(text, entry)
   }
 
   for (const [place, food] of foods.entries()) {
