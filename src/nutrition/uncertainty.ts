@@ -1,7 +1,7 @@
 import { STAVES, type Stave, type Staves, stavesOf } from './amino-acids.ts'
 import type { Pattern } from './pattern.ts'
 import type { DigestibilityTier, Doubt, Portion, ProfileTier, ProteinSource } from './protein-source.ts'
-import { seededNormals, seedOf } from './random.ts'
+import { normalQuantile, seededUniform, seedOf } from './random.ts'
 import { digestibleMgPerG } from './staves.ts'
 
 /**
@@ -27,33 +27,57 @@ export interface Band {
 }
 
 const DRAWS = 500
-/** normals a draw needs: one a stave, one for the digestibility, one for the protein content */
+/** What a draw needs of a food: a value a stave, one for the digestibility, one for the protein content. */
 const WIDTH = STAVES.length + 2
+const AT_DIGESTIBILITY = STAVES.length
+const AT_PROTEIN = STAVES.length + 1
 
-const drawsByFood = new Map<string, Float64Array>()
+/** By food id: for each column, in which order the draws go through the values of its distribution. */
+const ordersByFood = new Map<string, Uint16Array>()
+/** By coefficient of variation: the values of its distribution, one a stratum. */
+const factorsByCv = new Map<number, Float64Array>()
 
-/** The draws of a food depend on its id alone, so that a split or reordered portion gives the same band. */
-function drawsOf(foodId: string): Float64Array {
-  let draws = drawsByFood.get(foodId)
-  if (draws === undefined) {
-    draws = seededNormals(seedOf(foodId), DRAWS * WIDTH)
-    drawsByFood.set(foodId, draws)
+/**
+ * Latin hypercube sampling (Technometrics 1979;21:239, doi:10.1080/00401706.1979.10489755): each column goes through
+ * every stratum of its distribution once, in an order of its own. The orders depend on the food's id alone, so that a
+ * split or reordered portion gives the same band.
+ */
+function ordersOf(foodId: string): Uint16Array {
+  let orders = ordersByFood.get(foodId)
+  if (orders === undefined) {
+    const uniform = seededUniform(seedOf(foodId))
+    orders = new Uint16Array(DRAWS * WIDTH)
+    for (let column = 0; column < WIDTH; column++) {
+      const start = column * DRAWS
+      for (let d = 0; d < DRAWS; d++) {
+        const other = Math.floor(uniform() * (d + 1))
+        orders[start + d] = orders[start + other]!
+        orders[start + other] = d
+      }
+    }
+    ordersByFood.set(foodId, orders)
   }
-  return draws
+  return orders
+}
+
+/** Positive factors with mean 1 and coefficient of variation `cv` (log-normal), one for each of DRAWS strata. */
+function factorsOf(cv: number): Float64Array {
+  let factors = factorsByCv.get(cv)
+  if (factors === undefined) {
+    const variance = Math.log1p(cv * cv)
+    const sigma = Math.sqrt(variance)
+    factors = Float64Array.from({ length: DRAWS }, (_, d) =>
+      Math.exp(sigma * normalQuantile((d + 0.5) / DRAWS) - variance / 2),
+    )
+    factorsByCv.set(cv, factors)
+  }
+  return factors
 }
 
 function profileCv(food: ProteinSource, stave: Stave, coefficients: Coefficients): number {
-  const parts = [
-    coefficients.profile[food.profileTier][stave],
-    ...food.doubts.map(d => coefficients.doubt[d][stave]),
-  ]
-  return Math.hypot(...parts)
-}
-
-/** A positive factor with mean 1 and coefficient of variation `cv`, from a standard normal (log-normal). */
-function factor(cv: number, normal: number): number {
-  const sigma2 = Math.log1p(cv * cv)
-  return Math.exp(Math.sqrt(sigma2) * normal - sigma2 / 2)
+  let squares = coefficients.profile[food.profileTier][stave] ** 2
+  for (const doubt of food.doubts) squares += coefficients.doubt[doubt][stave] ** 2
+  return Math.sqrt(squares)
 }
 
 /**
@@ -74,40 +98,42 @@ export function bandOf(
   if (merged.size === 0) return null
   // In a fixed order, so that sums round alike however the plate was put together.
   const parts = [...merged.values()].sort((a, b) => (a.food.id < b.food.id ? -1 : 1))
-  const mg = Array.from({ length: DRAWS }, () => new Float64Array(STAVES.length))
   const protein = new Float64Array(DRAWS)
+  const mg = STAVES.map(() => new Float64Array(DRAWS))
+  const absorbed = new Float64Array(DRAWS)
   for (const { food, grams } of parts) {
-    const draws = drawsOf(food.id)
+    const orders = ordersOf(food.id)
     const crudeG = (grams / 100) * food.per100g.crudeProteinG
-    const sigmas = STAVES.map(stave => profileCv(food, stave, coefficients))
-    const digestible = STAVES.map(stave => digestibleMgPerG(food, stave))
-    const digestibilityCv = coefficients.digestibility[food.digestibilityTier]
+    const contents = factorsOf(coefficients.protein)
+    const digestibilities = factorsOf(coefficients.digestibility[food.digestibilityTier])
     for (let d = 0; d < DRAWS; d++) {
-      const at = d * WIDTH
-      const partG = crudeG * factor(coefficients.protein, draws[at + STAVES.length + 1]!)
-      const digestibility = factor(digestibilityCv, draws[at + STAVES.length]!)
+      const partG = crudeG * contents[orders[AT_PROTEIN * DRAWS + d]!]!
       protein[d]! += partG
-      const row = mg[d]!
-      for (let s = 0; s < STAVES.length; s++) {
-        row[s]! += partG * digestible[s]! * digestibility * factor(sigmas[s]!, draws[at + s]!)
-      }
+      absorbed[d] = partG * digestibilities[orders[AT_DIGESTIBILITY * DRAWS + d]!]!
     }
-  }
-  const scores = new Float64Array(DRAWS)
-  const limitedBy = new Array<number>(STAVES.length).fill(0)
-  for (let d = 0; d < DRAWS; d++) {
-    let least = Number.POSITIVE_INFINITY
-    let at = 0
     for (let s = 0; s < STAVES.length; s++) {
-      const stave = (100 * mg[d]![s]!) / (protein[d]! * pattern.mgPerG[STAVES[s]!])
-      if (stave < least) {
-        least = stave
-        at = s
+      const stave = STAVES[s]!
+      const mgPerG = digestibleMgPerG(food, stave)
+      const factors = factorsOf(profileCv(food, stave, coefficients))
+      const sums = mg[s]!
+      const start = s * DRAWS
+      for (let d = 0; d < DRAWS; d++) sums[d]! += absorbed[d]! * mgPerG * factors[orders[start + d]!]!
+    }
+  }
+  const scores = new Float64Array(DRAWS).fill(Number.POSITIVE_INFINITY)
+  const shortest = new Uint8Array(DRAWS)
+  for (let s = 0; s < STAVES.length; s++) {
+    const scale = 100 / pattern.mgPerG[STAVES[s]!]
+    for (let d = 0; d < DRAWS; d++) {
+      const stave = (scale * mg[s]![d]!) / protein[d]!
+      if (stave < scores[d]!) {
+        scores[d] = stave
+        shortest[d] = s
       }
     }
-    scores[d] = least
-    limitedBy[at]!++
   }
+  const limitedBy = new Array<number>(STAVES.length).fill(0)
+  for (const s of shortest) limitedBy[s]!++
   scores.sort()
   return {
     low: quantile(scores, 0.05),

@@ -1,4 +1,4 @@
-import stringWidth from 'string-width'
+import { widthOf } from './width.ts'
 
 /** Breaks a text into lines of at most `width` columns; lines after the first start with `indent` more blanks. */
 export function wrapLines(text: string, width: number, indent = 0): string[] {
@@ -7,7 +7,7 @@ export function wrapLines(text: string, width: number, indent = 0): string[] {
   let line = start
   for (const word of text.trimStart().split(' ')) {
     const candidate = line.trim() === '' ? line + word : `${line} ${word}`
-    if (line.trim() !== '' && stringWidth(candidate) > width) {
+    if (line.trim() !== '' && widthOf(candidate) > width) {
       lines.push(line)
       line = ' '.repeat(indent) + word
     } else {
@@ -20,19 +20,19 @@ export function wrapLines(text: string, width: number, indent = 0): string[] {
 
 /** Pads on the right to `width` columns, counting wide characters as the terminal does. */
 export function padEnd(text: string, width: number): string {
-  return text + ' '.repeat(Math.max(0, width - stringWidth(text)))
+  return text + ' '.repeat(Math.max(0, width - widthOf(text)))
 }
 
 export function padStart(text: string, width: number): string {
-  return ' '.repeat(Math.max(0, width - stringWidth(text))) + text
+  return ' '.repeat(Math.max(0, width - widthOf(text))) + text
 }
 
 /** Cuts a text to `width` columns, with an ellipsis where something was cut. */
 export function clip(text: string, width: number): string {
-  if (stringWidth(text) <= width) return text
+  if (widthOf(text) <= width) return text
   let cut = ''
   for (const character of text) {
-    if (stringWidth(cut + character) > width - 1) break
+    if (widthOf(cut + character) > width - 1) break
     cut += character
   }
   return `${cut}…`
@@ -43,7 +43,7 @@ export function inColumns(rows: string[][], right: readonly number[] = [], gap =
   const widths: number[] = []
   for (const row of rows) {
     row.forEach((cell, i) => {
-      widths[i] = Math.max(widths[i] ?? 0, stringWidth(cell))
+      widths[i] = Math.max(widths[i] ?? 0, widthOf(cell))
     })
   }
   return rows.map(row =>
