@@ -1,5 +1,5 @@
 import { existsSync, readFileSync, writeFileSync } from 'node:fs'
-import type { TableFile } from '../foods/table.ts'
+import { FOODS_MARK, type TableFile } from '../foods/table.ts'
 import { compileTable } from './compile/foods.ts'
 import { readInputs } from './compile/inputs.ts'
 import { compileKitchen, kitchenJson } from './compile/kitchen.ts'
@@ -14,7 +14,7 @@ const SHOWN_AT_MOST = 50
 export function tableJson(table: TableFile): string {
   const list = (rows: readonly unknown[]) => `[\n${rows.map(row => JSON.stringify(row)).join(',\n')}\n]`
   const { patterns, coefficients, sources, foods } = table
-  return `{"patterns":${list(patterns)},\n"coefficients":${JSON.stringify(coefficients)},\n"sources":${list(sources)},\n"foods":${list(foods)}}\n`
+  return `{"patterns":${list(patterns)},\n"coefficients":${JSON.stringify(coefficients)},\n"sources":${list(sources)}${FOODS_MARK}${foods.map(food => JSON.stringify(food)).join(',\n')}\n]}\n`
 }
 
 function fail(lines: readonly string[]): never {

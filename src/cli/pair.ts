@@ -117,7 +117,7 @@ Within what
         readNumber('--mass', options.mass, { least: 20, most: 5000, unit: 'g' }) ?? settings.massAtMostG,
       pairings:
         readNumber('--pairings', options.pairings, { least: 1, most: 9, unit: 'pairings', whole: true }) ?? 3,
-      market: world.table().foods,
+      market: () => world.table().foods,
     }
     const found = findPairings(problem)
     return options.json

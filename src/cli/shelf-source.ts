@@ -32,7 +32,10 @@ export async function chosenShelf(option: string | undefined, world: World): Pro
 
 /** Reads a shelf file's text, or refuses it with the first line that is wrong and how many more there are. */
 export function shelfFromText(text: string, label: string, world: World): Shelf {
-  const { shelf, problems } = readShelfFile(text, words => foodByWords(words, world.finder()))
+  const { shelf, problems } = readShelfFile(text, words => {
+    const byId = world.table().foodById.get(words)
+    return byId === undefined ? foodByWords(words, world.finder()) : { ok: true, food: byId }
+  })
   const [first, ...more] = problems
   if (first === undefined) return shelf
   const others = more.length === 0 ? '' : ` (and ${more.length} more ${more.length === 1 ? 'line' : 'lines'})`
@@ -60,6 +63,8 @@ export function shelfFoods(shelf: Shelf, world: World): ShelfFood[] {
 
 /** A food that a command's words name, or a refusal with the nearest. */
 export function namedFood(words: string, world: World): Food {
+  const byId = world.table().foodById.get(words)
+  if (byId !== undefined) return byId
   const reading = foodByWords(words, world.finder())
   if (reading.ok) return reading.food
   throw new Refusal(reading.problem)

@@ -295,6 +295,10 @@ function amountProblem(said: string, grams: number, food: Food): string | null {
   return null
 }
 
+function isSensible(grams: number): boolean {
+  return grams >= LEAST_G && grams <= MOST_G
+}
+
 /** A food's usual portion, in grams and in its own measures. */
 function usualReadings(food: Food): NearReading[] {
   const { usual } = food.portionG
@@ -338,7 +342,7 @@ function isUnderstood({ text, food, grams }: NearReading): boolean {
 function readingOf(amount: Scanned | null, amountText: string, food: Food): NearReading {
   if (amount !== null && amount.doubt === null) {
     const weighed = weighTerms(amount.terms, food, '')
-    if (weighed !== null && !('several' in weighed) && weighed.grams >= LEAST_G && weighed.grams <= MOST_G) {
+    if (weighed !== null && !('several' in weighed) && isSensible(weighed.grams)) {
       const reading = { text: `${amountText} ${food.name}`, food, grams: weighed.grams }
       if (isUnderstood(reading)) return reading
     }
@@ -375,7 +379,10 @@ function doubtful(said: string, amount: Scanned, doubt: Doubt, food: Food): Refu
     case 'comma': {
       const size = amount.terms[0]!
       if (size.eachG !== null || size.eachMl !== null) {
-        const total = size.eachG === null ? [] : [doubt.low, doubt.high].map(grams => inGrams(grams, food))
+        const total =
+          size.eachG === null
+            ? []
+            : [doubt.low, doubt.high].filter(isSensible).map(grams => inGrams(grams, food))
         return refused(`"${said}" may mean the weight of each or of all; give the whole weight`, total)
       }
       return refused(`"${said}" may mean ${doubt.low} or ${doubt.high}; write it without the comma`, [
@@ -418,7 +425,7 @@ function noMeasure(
     const readings = several.map(({ grams }) => inGrams(Math.round(term.count * grams * 10) / 10, food))
     return refused(
       `"${said}" may be any of several measures of ${food.name}: ${names}; give grams`,
-      readings.filter(({ grams }) => grams !== null && grams >= LEAST_G && grams <= MOST_G),
+      readings.filter(({ grams }) => grams !== null && isSensible(grams)),
     )
   }
   const meant = READINGS_OF.get(unit?.name ?? '')

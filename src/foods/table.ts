@@ -17,6 +17,9 @@ export interface TableFile {
   foods: Food[]
 }
 
+/** What parts the foods from the rest in data/foods.json: after it, a food a line. */
+export const FOODS_MARK = ',\n"foods":[\n'
+
 /** The table with its look-ups. */
 export interface Table {
   foods: readonly Food[]

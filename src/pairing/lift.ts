@@ -13,13 +13,16 @@ export interface LiftContext {
   servings: number
   without: readonly AllergenId[]
   allow: { eggs: boolean; dairy: boolean }
-  market: readonly Food[]
+  /** read only where the shelf itself does not help enough */
+  market: () => readonly Food[]
 }
 
 /** A change that raises the DIAAS by less than this (per cent) is not worth a cook's while. */
 const WORTH = 0.5
 /** A food of the market is only named where it beats the shelf by this (per cent). */
 const WORTH_BUYING = 2
+/** From this DIAAS (per cent) on a protein may be called good (FAO Food and Nutrition Paper 92, 2013). */
+const GOOD = 75
 /** A lift adds a little: at most this share of a usual portion, or of what is on the plate. */
 const LITTLE = 0.75
 
@@ -30,7 +33,7 @@ export function liftContext(problem: PairingProblem): LiftContext {
     servings: problem.servings,
     without: problem.without,
     allow: problem.allow,
-    market: problem.market ?? [],
+    market: problem.market ?? (() => []),
   }
 }
 
@@ -40,57 +43,81 @@ export function liftContext(problem: PairingProblem): LiftContext {
  * Empty where no change is worth it, or where nothing is short (DIAAS 100 or more).
  */
 export function liftOptions(portions: readonly Portion<Food>[], context: LiftContext): LiftOption[] {
-  const plate = portions.map(({ food, grams }) =>
-    candidateOf(food, context.pattern, { leastG: grams, mostG: grams }),
-  )
-  const grams = portions.map(portion => portion.grams)
-  const now = qualityOf(plate, grams)
-  if (plate.length === 0 || now >= 1) return []
-  const better = (options: (LiftOption | null)[]): LiftOption | null =>
-    options.reduce<LiftOption | null>(
-      (best, option) => (option !== null && (best === null || option.diaas > best.diaas) ? option : best),
-      null,
-    )
-  const worthwhile = (option: LiftOption | null): LiftOption | null =>
-    option !== null && option.diaas >= 100 * now + WORTH ? option : null
-
-  const onPlate = new Set(portions.map(({ food }) => food.id))
-  const kins = new Set(portions.map(({ food }) => food.kin))
-  const changed = worthwhile(better(plate.map((_, at) => changeOf(plate, grams, at, context))))
-  const mayAdd = (food: Food) =>
-    food.place === 'protein' &&
-    food.per100g.proteinG > 0 &&
-    !kins.has(food.kin) &&
-    barred(food, context) === null
-  const fromShelf = worthwhile(
-    better(
-      context.shelf
-        .filter(({ food, mark }) => mark !== 'hold-back' && !onPlate.has(food.id) && mayAdd(food))
-        .map(item => additionOf(plate, grams, item, context, true)),
-    ),
-  )
-  const shelfKins = new Set(context.shelf.map(({ food }) => food.kin))
-  const bought = worthwhile(
-    better(
-      context.market
-        .filter(food => !shelfKins.has(food.kin) && mayAdd(food))
-        .map(food => additionOf(plate, grams, { food, onHandG: null, mark: '' }, context, false)),
-    ),
-  )
-  return [changed, fromShelf, bought]
-    .filter(option => option !== null)
-    .sort((a, b) => Math.min(100, b.diaas) - Math.min(100, a.diaas) || Number(b.onShelf) - Number(a.onShelf))
+  const plate = lackingPlate(portions, context)
+  return plate === null ? [] : ranked([...atHome(plate, context), bought(plate, context)])
 }
 
 /** The one change to name beside a pairing: from the shelf where that helps, else (or where far better) from the table. */
 export function nextLift(portions: readonly Portion<Food>[], context: LiftContext): LiftOption | null {
-  const options = liftOptions(portions, context)
-  const home = options.find(({ onShelf }) => onShelf) ?? null
-  const bought = options.find(({ onShelf }) => !onShelf) ?? null
-  if (home === null) return bought
-  if (bought === null) return home
-  const gain = Math.min(100, bought.diaas) - Math.min(100, home.diaas)
-  return gain > WORTH_BUYING && home.diaas < 75 && bought.diaas >= 75 ? bought : home
+  const plate = lackingPlate(portions, context)
+  if (plate === null) return null
+  const home = ranked(atHome(plate, context))[0] ?? null
+  if (home !== null && home.diaas >= GOOD) return home
+  const away = bought(plate, context)
+  if (home === null || away === null) return home ?? away
+  return away.diaas >= GOOD && away.diaas - home.diaas > WORTH_BUYING ? away : home
+}
+
+/** A plate whose shortest stave is short, as the search for a lift sees it. */
+interface LackingPlate {
+  set: Candidate[]
+  grams: number[]
+  quality: number
+  kins: ReadonlySet<string>
+}
+
+/** Null where nothing is short, or nothing is there. */
+function lackingPlate(portions: readonly Portion<Food>[], context: LiftContext): LackingPlate | null {
+  const set = portions.map(({ food, grams }) =>
+    candidateOf(food, context.pattern, { leastG: grams, mostG: grams }),
+  )
+  const grams = portions.map(portion => portion.grams)
+  const quality = qualityOf(set, grams)
+  if (set.length === 0 || quality >= 1) return null
+  return { set, grams, quality, kins: new Set(portions.map(({ food }) => food.kin)) }
+}
+
+/** The best change to what is on the plate, and the best addition from the shelf. */
+function atHome(plate: LackingPlate, context: LiftContext): (LiftOption | null)[] {
+  const changed = plate.set.map((_, at) => changeOf(plate.set, plate.grams, at, context))
+  const added = context.shelf
+    .filter(({ food, mark }) => mark !== 'hold-back' && mayBeAdded(food, plate, context))
+    .map(item => additionOf(plate.set, plate.grams, item, context, true))
+  return [best(changed, plate), best(added, plate)]
+}
+
+/** The best addition that is not on the shelf in any state. */
+function bought(plate: LackingPlate, context: LiftContext): LiftOption | null {
+  const shelfKins = new Set(context.shelf.map(({ food }) => food.kin))
+  const added = context
+    .market()
+    .filter(food => !shelfKins.has(food.kin) && mayBeAdded(food, plate, context))
+    .map(food => additionOf(plate.set, plate.grams, { food, onHandG: null, mark: '' }, context, false))
+  return best(added, plate)
+}
+
+function mayBeAdded(food: Food, plate: LackingPlate, context: LiftContext): boolean {
+  return (
+    food.place === 'protein' &&
+    food.per100g.proteinG > 0 &&
+    !plate.kins.has(food.kin) &&
+    barred(food, context) === null
+  )
+}
+
+/** The option with the greatest score, if it is worth a cook's while. */
+function best(options: readonly (LiftOption | null)[], plate: LackingPlate): LiftOption | null {
+  let found: LiftOption | null = null
+  for (const option of options) {
+    if (option !== null && (found === null || option.diaas > found.diaas)) found = option
+  }
+  return found !== null && found.diaas >= 100 * plate.quality + WORTH ? found : null
+}
+
+function ranked(options: readonly (LiftOption | null)[]): LiftOption[] {
+  return options
+    .filter(option => option !== null)
+    .sort((a, b) => Math.min(100, b.diaas) - Math.min(100, a.diaas) || Number(b.onShelf) - Number(a.onShelf))
 }
 
 /** The best practical change to the grams of one food of the plate, up or down. */

@@ -32,7 +32,7 @@ export interface PairingProblem {
   /** how many different pairings to return */
   pairings: number
   /** foods that could be bought, for what would lift a pairing; none: the shelf alone */
-  market?: readonly Food[]
+  market?: () => readonly Food[]
 }
 
 /** One change that would raise the DIAAS of a plate: `deltaG` more (or less) of a food. */

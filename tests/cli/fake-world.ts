@@ -1,6 +1,7 @@
 import { Refusal, type World } from '../../src/cli/command.ts'
 import { runCommand } from '../../src/cli/run-command.ts'
 import { loadTable } from '../../src/foods/load.ts'
+import { plainText } from '../../src/foods/plain-text.ts'
 import { createFinder } from '../../src/foods/search.ts'
 
 const table = loadTable()
@@ -20,7 +21,7 @@ export function fakeWorld(
     readStdin: async () => given.stdin ?? '',
     readFile: async path => {
       const text = files[path]
-      if (text === undefined) throw new Refusal(`${path}: there is no such file`)
+      if (text === undefined) throw new Refusal(`${plainText(path)}: there is no such file`)
       return text
     },
     writeFile: async (path, text) => {
