@@ -9,8 +9,9 @@ import {
   weighOne,
   weighUnit,
 } from './measures.ts'
+import { cleaned, type Parted, partPortion } from './part-portion.ts'
 import { plainText } from './plain-text.ts'
-import { type Doubt, keyboardSigns, type Scanned, scanAmount, type Term } from './scan-amount.ts'
+import type { Doubt, Scanned, Term } from './scan-amount.ts'
 import { type Finder, nearestKinds, type Resolution, resolve, shown, whyNoFood } from './search.ts'
 import { statesOf } from './state-words.ts'
 import { type Unit, unitOf } from './units.ts'
@@ -49,14 +50,6 @@ const LEAST_G = 0.01
 
 type Refused = Extract<PortionReading, { ok: false }>
 
-/** The text parted into an amount (or none) and the food's words. */
-interface Parted {
-  amount: Scanned | null
-  /** the amount as written */
-  amountText: string
-  foodText: string
-}
-
 /**
  * Reads a portion as people write it: an amount and a food, in either order. Amounts are masses, or measures of the
  * food's own. What is not understood, or may be several things, is refused with up to three readings that would be.
@@ -75,7 +68,7 @@ export function readPortion(text: string, finder: Finder, options: PortionOption
   }
   const plain = plainText(text).trim()
   const whole = finder.byId(plain.toLowerCase())
-  const parted = whole === undefined ? part(plain) : { amount: null, amountText: '', foodText: plain }
+  const parted = whole === undefined ? partPortion(plain) : { amount: null, amountText: '', foodText: plain }
   return readParted(said, parted, finder, options)
 }
 
@@ -118,71 +111,6 @@ function readParted(said: string, parted: Parted, finder: Finder, options: Porti
 
 /** An amount with a unit further on in the food's words. */
 const MORE_AMOUNTS = /(^|[\s(])\d+(?:[.,]\d+)?\s*(?:g|kg|mg|oz|lb|lbs|ml|grams?|cups?|tbsp|tsp)(?=$|[\s,;)])/i
-const EDGES = /^[\s,;:.)=/*-]+|[\s,;:.(=*-]+$/g
-const LEADING_WORDS = /^(?:of\s+(?:the\s+|my\s+)?|the\s+|de\s+)/i
-
-function part(plain: string): Parted {
-  const written = keyboardSigns(plain)
-    .replace(/^\s*[-*•]\s+/, '')
-    .trim()
-  const text = withoutArticle(written) ? `a ${written}` : written
-  const leading = scanAmount(text)
-  if (leading !== null) {
-    const foodText = cleaned(text.slice(leading.end))
-    // "2 cloves" is two of the food cloves
-    const term = leading.terms[0]
-    const unit = term?.unit
-    if (foodText === '' && leading.terms.length === 1 && unit?.kind === 'piece') {
-      const amount = { ...leading, terms: [{ ...term!, unit: null }] }
-      const amountText = text.slice(0, leading.end).replace(/\s*\S+\s*$/, '')
-      return { amount, amountText, foodText: unit.name }
-    }
-    return withLabel({ amount: leading, amountText: text.slice(0, leading.end).trim(), foodText })
-  }
-  let inside: Parted | null = null
-  for (const match of text.matchAll(/[\s,:;(=]+(?:-|x\s+(?=\d))?\s*/gi)) {
-    const start = match.index + match[0].length
-    if (match.index === 0 || start >= text.length) continue
-    // a minus sign that stands at its number is no dash
-    const signed = match[0].endsWith('-') ? start - 1 : start
-    const amount = scanAmount(text, signed)
-    if (amount === null) continue
-    const after = text.slice(amount.end)
-    const amountText = text.slice(signed, amount.end).trim()
-    if (/^[\s.,;)]*$/.test(after) || /^\s*each[\s.]*$/i.test(after)) {
-      return { amount, amountText, foodText: cleaned(text.slice(0, match.index)) }
-    }
-    const { unit } = amount.terms[0]!
-    if (inside === null && unit !== null && unit.kind !== 'piece') {
-      inside = { amount, amountText, foodText: cleaned(`${text.slice(0, match.index)} ${after}`) }
-    }
-  }
-  return inside ?? { amount: null, amountText: '', foodText: cleaned(text) }
-}
-
-/** `1 can of chickpeas (400 g)`: the label in brackets at the end belongs to the amount. */
-function withLabel(parted: Parted): Parted {
-  const match = /^(.*\S)\s*(\([^()]*\))$/.exec(parted.foodText)
-  if (match === null) return parted
-  const amountText = `${parted.amountText} ${match[2]}`
-  const amount = scanAmount(amountText)
-  return amount?.end === amountText.length ? { amount, amountText, foodText: match[1]! } : parted
-}
-
-/** `handful of almonds`, `heaped tbsp tahini`: one of them, though no "a" stands before it. */
-function withoutArticle(text: string): boolean {
-  const match = /^(heaped|heaping|rounded|scant|level|small|large)?\s*([a-z]+)\b\.?\s+(of\b)?/i.exec(text)
-  const unit = match === null ? null : unitOf(match[2]!.toLowerCase())
-  return unit !== null && unit.kind !== 'mass' && (match![1] !== undefined || match![3] !== undefined)
-}
-
-function cleaned(text: string): string {
-  let clean = text.replace(EDGES, '').replace(LEADING_WORDS, '')
-  // a lone bracket is left by an amount in brackets
-  if (clean.includes('(') !== clean.includes(')')) clean = clean.replace(/[()]/g, ' ')
-  return clean.replace(/\s+/g, ' ').trim()
-}
-
 /** The food, in the light of the amount: a can holds what is canned, and of several foods only one may come in slices. */
 function resolveFor(amount: Scanned | null, foodText: string, finder: Finder): Resolution {
   const unit = amount?.terms[0]?.unit ?? null
@@ -323,7 +251,7 @@ function inGrams(grams: number, food: Food): NearReading {
 
 /** Does the reading's text, parted again, weigh what it says? */
 function isUnderstood({ text, food, grams }: NearReading): boolean {
-  const { amount, foodText } = part(text)
+  const { amount, foodText } = partPortion(text)
   if (
     amount === null ||
     amount.doubt !== null ||

@@ -91,15 +91,17 @@ export function createFinder(foods: readonly Food[]): Finder {
     return rank(index, near, words)
   }
 
+  function foodById(id: string): Food | undefined {
+    byId ??= new Map(foods.map(food => [food.id, food]))
+    return byId.get(id)
+  }
+
   return {
     foods,
-    byId(id) {
-      byId ??= new Map(foods.map(food => [food.id, food]))
-      return byId.get(id)
-    },
+    byId: foodById,
     weigh,
     find(words, { limit = DEFAULT_LIMIT, accept } = {}) {
-      const exact = this.byId(words.trim())
+      const exact = foodById(words.trim())
       const hits: Hit[] = []
       if (exact !== undefined && (accept === undefined || accept(exact)) && limit > 0)
         hits.push({ food: exact, score: 2, matched: markedRanges(exact.name, words) })
