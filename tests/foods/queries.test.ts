@@ -32,12 +32,8 @@ describe('what cooks type, on the whole table', () => {
 })
 
 test('the first searches of a command, answered from few foods, are answered as from all', () => {
-  const words = QUERIES.flatMap(([query]) => [
-    query,
-    query.slice(0, 5),
-    `${query} boiled`,
-    query.toUpperCase(),
-  ])
+  const forms = (query: string) => [query, query.slice(0, 5), `${query} boiled`, query.toUpperCase()]
+  const words = QUERIES.map(([query], i) => forms(query)[i % 4]!)
   const all = createFinder(table.foods)
   // a beginning of one letter needs the whole index, which then answers all that follows
   all.find('a')
