@@ -1,7 +1,7 @@
 import type { Food } from '../foods/food.ts'
 import { allergenName } from '../kitchen/allergen-names.ts'
 import { cautionsFor, STANDING_NOTE } from '../kitchen/cautions.ts'
-import { wrapLines } from './text/lines.ts'
+import { wrapLines } from '../tui/text/lines.ts'
 
 /** The allergens of some foods, each once, by their full names. */
 export function allergensOf(foods: readonly Food[]): string[] {

@@ -1,10 +1,10 @@
 import { plainText } from '../foods/plain-text.ts'
+import { wholeScore } from '../tui/text/figures.ts'
+import { inColumns } from '../tui/text/lines.ts'
 import { readArguments, readNumber } from './arguments.ts'
 import { answer, type Command, jsonText, NO_ANSWER, Refusal } from './command.ts'
 import { hitJson } from './json/food-json.ts'
 import { readPattern } from './options.ts'
-import { wholeScore } from './text/figures.ts'
-import { inColumns } from './text/lines.ts'
 import { styleOf } from './text/style.ts'
 
 export const find: Command = {

@@ -1,10 +1,10 @@
 import { stringify } from 'csv-stringify/sync'
+import { wholeScore } from '../tui/text/figures.ts'
+import { inColumns } from '../tui/text/lines.ts'
 import { readArguments } from './arguments.ts'
 import { answer, type Command, jsonText, Refusal } from './command.ts'
 import { foodJson } from './json/food-json.ts'
 import { readPattern } from './options.ts'
-import { wholeScore } from './text/figures.ts'
-import { inColumns } from './text/lines.ts'
 
 export const foods: Command = {
   name: 'foods',

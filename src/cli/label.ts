@@ -3,12 +3,12 @@ import { plainText } from '../foods/plain-text.ts'
 import { sourceByWords } from '../foods/source-by-words.ts'
 import { STAVE_NAMES } from '../nutrition/amino-acids.ts'
 import { labelRange } from '../pairing/label-range.ts'
+import { wholeScore } from '../tui/text/figures.ts'
+import { wrapLines } from '../tui/text/lines.ts'
 import { readArguments } from './arguments.ts'
 import { careJson, careLines } from './care.ts'
 import { answer, type Command, jsonText, NO_ANSWER, Refusal } from './command.ts'
 import { readPattern } from './options.ts'
-import { wholeScore } from './text/figures.ts'
-import { wrapLines } from './text/lines.ts'
 
 export const label: Command = {
   name: 'label',

@@ -4,12 +4,12 @@ import { readPortion } from '../foods/read-portion.ts'
 import { scoreBasis } from '../foods/score.ts'
 import { scorePlate } from '../nutrition/plate-score.ts'
 import type { Portion } from '../nutrition/protein-source.ts'
+import { wrapLines } from '../tui/text/lines.ts'
 import { readArguments } from './arguments.ts'
 import { careJson, careLines } from './care.ts'
 import { answer, type Command, jsonText, Refusal, type World } from './command.ts'
 import { scoreJson } from './json/score-json.ts'
 import { readPattern } from './options.ts'
-import { wrapLines } from './text/lines.ts'
 import { plateLines } from './text/plate-lines.ts'
 
 export const score: Command = {

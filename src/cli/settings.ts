@@ -1,11 +1,11 @@
 import { plainText } from '../foods/plain-text.ts'
 import { DEFAULT_SETTINGS } from '../shelf/default-settings.ts'
 import { type Settings, settingsSchema } from '../shelf/settings.ts'
+import { inColumns } from '../tui/text/lines.ts'
 import { readArguments } from './arguments.ts'
 import { answer, type Command, jsonText, NO_ANSWER, Refusal } from './command.ts'
 import { homeOf } from './kept.ts'
 import { readWithout } from './options.ts'
-import { inColumns } from './text/lines.ts'
 
 /** Settings by the name that the command line uses, with what they are. */
 const NAMES: Record<string, { key: keyof Settings; what: string }> = {

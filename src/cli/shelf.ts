@@ -6,12 +6,12 @@ import { writeShelfCsv, writeShelfJson } from '../shelf/import-export.ts'
 import { isDay, MARKS } from '../shelf/marks.ts'
 import type { Shelf } from '../shelf/shelf.ts'
 import type { Kept, ShelfStore } from '../shelf/store.ts'
+import { grams, proteinG } from '../tui/text/figures.ts'
+import { inColumns } from '../tui/text/lines.ts'
 import { readArguments } from './arguments.ts'
 import { answer, type Command, jsonText, NO_ANSWER, type Outcome, Refusal, type World } from './command.ts'
 import { openStore } from './kept.ts'
 import { namedFood, shelfFromText } from './shelf-source.ts'
-import { grams, proteinG } from './text/figures.ts'
-import { inColumns } from './text/lines.ts'
 
 const KINDS = {
   mark: 'text',

@@ -3,9 +3,9 @@ import { STAVE_NAMES } from '../../nutrition/amino-acids.ts'
 import type { PlateScore } from '../../nutrition/plate-score.ts'
 import type { LiftOption } from '../../pairing/problem.ts'
 import { drawStaves } from '../../tui/staves/draw-staves.ts'
+import { diaasText, grams, kcal, proteinG, signed, wholeScore } from '../../tui/text/figures.ts'
+import { inColumns, wrapLines } from '../../tui/text/lines.ts'
 import type { World } from '../command.ts'
-import { diaasText, grams, kcal, proteinG, signed, wholeScore } from './figures.ts'
-import { inColumns, wrapLines } from './lines.ts'
 import { styleOf } from './style.ts'
 
 /** A scored plate as text: its foods with grams, the figures, and the staves as a chart. */
