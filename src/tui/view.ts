@@ -1,0 +1,91 @@
+import type { Knowledge, State } from './state.ts'
+import { STYLE } from './style.ts'
+import { clip, wrapLines } from './text/lines.ts'
+import { PAGE_FRAME } from './updates/page-keys.ts'
+import { benchView } from './views/bench-view.ts'
+import { fitted, keyLine, LEAST, promptLines, rule } from './views/frame.ts'
+import { plateView } from './views/plate-view.ts'
+import { shelfView } from './views/shelf-view.ts'
+
+/** The screen as lines: drawn from the state alone. */
+export function view(state: State, knowledge: Knowledge): string[] {
+  if (state.columns < LEAST.columns || state.rows < LEAST.rows) return tooSmall(state)
+  if (state.page !== null) return pageView(state)
+  if (state.pasted !== null) return pastedView(state)
+  switch (state.screen) {
+    case 'shelf':
+      return shelfView(state, knowledge)
+    case 'bench':
+      return benchView(state, knowledge.colour)
+    case 'plate':
+      return plateView(state, knowledge)
+  }
+}
+
+function tooSmall({ columns, rows }: State): string[] {
+  const text = `This window is ${columns} by ${rows}; shortstave needs ${LEAST.columns} by ${LEAST.rows}. Make it larger, please, or press Ctrl+C.`
+  return wrapLines(text, Math.max(10, columns - 1)).slice(0, Math.max(1, rows - 1))
+}
+
+function pageView(state: State): string[] {
+  const page = state.page!
+  const room = Math.max(1, state.rows - PAGE_FRAME)
+  const shown = page.lines.slice(page.scroll, page.scroll + room)
+  const more = page.lines.length > room ? `  ${page.scroll + shown.length} of ${page.lines.length} lines` : ''
+  const keys: [string, string][] =
+    page.lines.length > room
+      ? [
+          ['↑↓ Space', 'scroll'],
+          ['Esc', 'back'],
+        ]
+      : [['Esc', 'back']]
+  return fitted(
+    state,
+    [` ${STYLE.bold(clip(page.title, state.columns - 30))}${STYLE.dim(more)}`],
+    shown.map(line => ` ${line}`),
+    ['', keyLine(state.columns, keys)],
+  )
+}
+
+/** A pasted list: what was understood, and what is to be mended. */
+function pastedView(state: State): string[] {
+  const lines = state.pasted!
+  const good = lines.filter(({ reading }) => reading.ok).length
+  const under = (at: number, text: string) =>
+    state.pasteCursor === at ? ` ▸ ${STYLE.bold(text)}` : `   ${text}`
+  const put =
+    good === 0 ? 'No line is understood yet' : `Put ${good} ${good === 1 ? 'food' : 'foods'} on the shelf`
+  const blocks = lines.map(({ text, reading }, i) =>
+    reading.ok
+      ? [under(i + 1, clip(`✓ ${reading.echo}`, state.columns - 5))]
+      : [
+          under(i + 1, clip(`✗ ${text}`, state.columns - 5)),
+          ...wrapLines(`     ${reading.problem}`, state.columns - 2, 5)
+            .slice(0, 2)
+            .map(STYLE.dim),
+        ],
+  )
+  const foot = [
+    ...(state.prompt === null
+      ? [state.message === '' ? '' : ` ${clip(state.message, state.columns - 2)}`]
+      : promptLines(state)),
+    keyLine(
+      state.columns,
+      state.prompt === null
+        ? [
+            ['Enter', state.pasteCursor === 0 ? 'put them there' : 'mend the line'],
+            ['#', 'drop the line'],
+            ['Esc', 'leave the list'],
+          ]
+        : [
+            ['Enter', 'take it'],
+            ['Esc', 'leave it'],
+          ],
+    ),
+  ]
+  const top = [rule(`pasted: ${lines.length} lines, ${good} understood`, state.columns), under(0, put), '']
+  const room = Math.max(1, state.rows - 1 - top.length - foot.length)
+  let first = 0
+  while (first < state.pasteCursor - 1 && blocks.slice(first, state.pasteCursor).flat().length > room) first++
+  return fitted(state, top, blocks.slice(first).flat(), foot)
+}
