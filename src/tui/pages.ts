@@ -16,52 +16,33 @@ import { inColumns, wrapLines } from './text/lines.ts'
 
 const page = (title: string, lines: string[]): Page => ({ title, lines, scroll: 0, isCard: false })
 
-/** Everything that a key does, on one screen. */
-export function helpPage({ screen, columns }: State): Page {
-  const everywhere = [
-    ['Tab, Shift+Tab', 'next screen, last screen: shelf, bench, plate'],
-    ['Esc', 'back, or clear what is typed'],
-    ['?', 'this page'],
-    ['Ctrl+C', 'leave; what you changed is kept'],
-  ]
-  const shelf = [
+/** Everything that a key does, on one screen of 80 by 24. */
+export function helpPage({ columns }: State): Page {
+  const rows: (string | [key: string, what: string])[] = [
+    ['Tab', 'next screen, Shift+Tab the last;  Esc back;  Ctrl+C leave'],
+    'shelf: letters find, signs act',
     ['letters', 'find a food on the shelf, and in the table below it'],
-    ['Enter', 'how much there is now, or put the food on the shelf'],
-    ['! and .', 'use up, hold back (again: no mark)'],
-    ['@', 'use-by day'],
-    ['#  Del', 'take off the shelf'],
-    ['=', 'look closer: staves, tiers, sources'],
-    ['/', 'order: as put, use-by, protein, name'],
-    ['< and >', 'undo, do again (the last 50 changes)'],
-    ['paste', 'a whole list, one food a line, such as: 2 cups dry lentils'],
-  ]
-  const bench = [
-    ['up, down, 1-5', 'choose a pairing;  Enter takes it to the plate'],
-    ['w', 'why it scores what it scores'],
-    ['c', 'set two side by side'],
+    ['Enter', 'how much there is; or put a food of the table there'],
+    ['!  .', 'use up, hold back (again: no mark);  @ use-by day'],
+    ['#  Del', 'take off the shelf;  <  > undo, do again (50 changes)'],
+    ['=  /', 'look closer (staves, tiers, sources);  order of the list'],
+    ['paste', 'a whole list, one food a line: 2 cups dry lentils'],
+    'bench: pairings follow every change',
+    ['up down 1-5', 'choose a pairing;  Enter takes it;  w why;  c compare'],
     ['t n k', 'protein target, servings, foods at most'],
-    ['b i m', 'body mass, intake, meals: the target from them;  u usual ranges'],
+    ['b i m u', 'target from body mass, intake, meals;  u usual ranges'],
     ['a e d l p', 'allergens, eggs, dairy, energy ceiling, pattern'],
+    'plate',
+    ['left right', 'less, more (or - +);  Enter an amount;  a add;  x off'],
+    ['1 2 3  z', 'try a lift; go back'],
+    ['c s f n', 'card for the kitchen, serve, look closer, servings'],
+    'DIAAS: the shortest of nine indispensable amino acids, in % of the pattern;',
+    'the band behind it holds 90 % of what the figures may be. No medical advice.',
   ]
-  const plate = [
-    ['left, right', 'less, more of the food (also - and +);  Enter types an amount'],
-    ['a x f', 'add a food, take one off, look closer'],
-    ['1 2 3 and z', 'try a lift; go back'],
-    ['c s n', 'card for the kitchen, serve, servings'],
-  ]
-  const section = (title: string, rows: string[][], here: boolean) => [
-    `${here ? '▸ ' : ''}${title}`,
-    ...rows.map(([key, what]) => `  ${key!.padEnd(15)} ${what}`),
-  ]
-  const lines = [
-    ...section('everywhere', everywhere, false),
-    ...section('shelf: letters find, signs act', shelf, screen === 'shelf'),
-    ...section('bench', bench, screen === 'bench'),
-    ...section('plate', plate, screen === 'plate'),
-  ]
+  const lines = rows.map(row => (typeof row === 'string' ? row : `  ${row[0].padEnd(12)} ${row[1]}`))
   return page(
     'All keys',
-    lines.flatMap(line => wrapLines(line, columns - 4, 18)),
+    lines.flatMap(line => wrapLines(line, columns - 2, 15)),
   )
 }
 

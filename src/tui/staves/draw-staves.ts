@@ -18,7 +18,7 @@ export interface DrawOptions {
 }
 
 /** Narrower than this the compact drawing is used: a line a stave. */
-const FULL_FROM_COLUMNS = 54
+const FULL_FROM_COLUMNS = 58
 const AXIS = 5
 /** The scale ends here at the latest; what is longer ends in an arrow. % of the pattern. */
 const SCALE_AT_MOST = 180
@@ -37,7 +37,7 @@ export function drawStaves(options: DrawOptions): string[] {
 
 function full(stacks: readonly Stack[], options: DrawOptions): string[] {
   const { height = 10, colour = false, ascii = false } = options
-  const pitch = Math.min(8, Math.floor((options.width - AXIS) / stacks.length))
+  const pitch = Math.min(8, Math.floor((options.width - AXIS - 3) / stacks.length))
   const gap = pitch >= 7 ? 3 : 2
   const barWidth = pitch - gap
   const water = Math.min(...stacks.map(({ total }) => total))

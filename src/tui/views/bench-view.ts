@@ -117,9 +117,10 @@ function pairingLines(pairing: Pairing, i: number, state: State, colour: boolean
     `shortest ${score.limiting === null ? '-' : STAVE_LABELS[score.limiting]}`,
     ...(pairing.portions.length > 1 && score.lift !== null ? [`lift ${signed(score.lift)}`] : []),
     kcal(score.kcal),
-  ]
-  const sketch = score.staves === null || state.spoken ? '' : ` ${stavesSketch(score.staves)}`
-  lines.push(...wrapLines(`      ${facts.join(' · ')}${sketch}`, columns - 1, 6))
+  ].join(' · ')
+  const sketch = score.staves === null || state.spoken ? '' : `  ${stavesSketch(score.staves)}`
+  const fits = widthOf(facts) + widthOf(sketch) + 6 < columns
+  lines.push(...wrapLines(`      ${facts}${fits ? sketch : ''}`, columns - 1, 6))
   if (under && state.spoken && score.staves !== null)
     lines.push(...wrapLines(`      ${stavesAsText(score.staves)}`, columns - 1, 6))
   if (under && state.why) {
