@@ -1,22 +1,20 @@
 import { z } from 'zod'
-import { historySchema, NO_HISTORY } from './history.ts'
-import { EMPTY_SHELF, shelfSchema } from './shelf.ts'
+import { historySchema, NO_HISTORY, remember } from './history.ts'
+import { type ServedPlate, servedPlateSchema, withPlate } from './served-plate.ts'
+import { EMPTY_SHELF, type Shelf, shelfSchema } from './shelf.ts'
+
+export { type ServedPlate, servedPlateSchema }
 
 /** The version that this program writes; documents of a newer one are refused and left alone. */
 export const DOCUMENT_VERSION = 1
 
-/** A plate that was served: the day, and grams a serving by food. */
-export const servedPlateSchema = z.object({
-  day: z.iso.date(),
-  servings: z.number().int().positive(),
-  portions: z.array(z.object({ food: z.string(), grams: z.number().positive() })),
-})
-export type ServedPlate = z.infer<typeof servedPlateSchema>
-
-/** All that is kept: the shelf with its history, foods from a packet (checked by their own schema), served plates. */
-export const documentSchema = z.object({
+/**
+ * All that is kept: the shelf with its history, foods from a packet (checked by their own schema), served plates.
+ * Loose: sections that this program doesn't know go through it unchanged.
+ */
+export const documentSchema = z.looseObject({
   shortstave: z.literal('kept'),
-  version: z.number().int(),
+  version: z.literal(DOCUMENT_VERSION),
   /** false until the cook has changed anything: then the sample shelf may be shown */
   begun: z.boolean(),
   shelf: shelfSchema,
@@ -34,6 +32,22 @@ export const NEW_DOCUMENT: KeptDocument = {
   history: NO_HISTORY,
   ownFoods: [],
   plates: [],
+}
+
+/** The document with another shelf, as a step that can be undone; a plate served with it is kept under its day. */
+export function withShelf(
+  document: KeptDocument,
+  shelf: Shelf,
+  label: string,
+  plate?: ServedPlate,
+): KeptDocument {
+  return {
+    ...document,
+    begun: true,
+    shelf,
+    history: remember(document.history, label, document.shelf, shelf, plate),
+    plates: plate === undefined ? document.plates : withPlate(document.plates, plate),
+  }
 }
 
 export type DocumentReading =

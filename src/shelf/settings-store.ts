@@ -1,6 +1,14 @@
+import { existsSync, mkdirSync, renameSync } from 'node:fs'
+import { dirname, join } from 'node:path'
 import Conf from 'conf'
+import type { z } from 'zod'
 import { DEFAULT_SETTINGS } from './default-settings.ts'
+import { reasonOf } from './reasons.ts'
 import { type Settings, settingsSchema } from './settings.ts'
+import { withLock } from './store-lock.ts'
+
+/** The version that this program writes; settings of a newer one are left alone. */
+const SETTINGS_VERSION = 1
 
 /** Settings as read, and one line for the cook where they could not be read or written. */
 export interface KeptSettings {
@@ -8,9 +16,17 @@ export interface KeptSettings {
   problem: string | null
 }
 
-/** Keeps the settings with `conf`, beside the shelf. A setting that is damaged takes its default, and that is said. */
+type Reading =
+  | { kind: 'sound'; settings: Settings }
+  | { kind: 'mended' | 'damaged' | 'newer'; settings: Settings; problem: string }
+
+/**
+ * Keeps the settings with `conf`, beside the shelf. A setting that is damaged takes its default, and that is said; a
+ * file that is damaged as a whole is set aside when settings are next kept. No method throws.
+ */
 export class SettingsStore {
   private readonly folder: string | undefined
+  private opened: Conf<Record<string, unknown>> | null = null
 
   constructor(folder?: string) {
     this.folder = folder === '' ? undefined : folder
@@ -18,41 +34,123 @@ export class SettingsStore {
 
   read(): KeptSettings {
     try {
-      const kept = this.open().store
-      const whole = settingsSchema.safeParse(kept)
-      if (whole.success) return { settings: whole.data, problem: null }
-      const damaged = new Set(whole.error.issues.map(({ path }) => String(path[0])))
-      const sound = Object.fromEntries(Object.entries(kept).filter(([key]) => !damaged.has(key)))
-      const mended = settingsSchema.safeParse(sound)
-      return {
-        settings: mended.success ? mended.data : DEFAULT_SETTINGS,
-        problem: `settings that cannot be: ${[...damaged].join(', ')}; their defaults are used`,
-      }
+      const reading = this.reading()
+      return { settings: reading.settings, problem: reading.kind === 'sound' ? null : reading.problem }
     } catch (error) {
       return {
         settings: DEFAULT_SETTINGS,
-        problem: `the settings cannot be read (${(error as Error).message}); defaults are used`,
+        problem: `the settings cannot be read (${reasonOf(error)}); defaults are used`,
       }
     }
   }
 
-  /** Writes them whole; null where that worked, else why not. */
+  /** Writes them whole; null where that worked, else why not. What another process changes meanwhile is lost: `change` keeps it. */
   write(settings: Settings): string | null {
+    const parsed = settingsSchema.safeParse(settings)
+    if (!parsed.success) return problemOf(parsed.error)
     try {
-      this.open().store = settings
-      return null
+      return this.keep(parsed.data)
     } catch (error) {
-      return `the settings cannot be kept (${(error as NodeJS.ErrnoException).code ?? (error as Error).message}); they hold until you leave`
+      return notKept(error)
     }
   }
 
-  private open(): Conf<Record<string, unknown>> {
-    return new Conf<Record<string, unknown>>({
+  /**
+   * Changes some settings of those that are kept at that moment, while no other process can. Refused, with nothing
+   * changed, where a value cannot be.
+   */
+  async change(changes: Partial<Settings>): Promise<KeptSettings> {
+    const before = this.read().settings
+    const parsed = settingsSchema.partial().safeParse(changes)
+    if (!parsed.success) return { settings: before, problem: problemOf(parsed.error) }
+    // The parsed whole has a default for each key that was not given: take only what was.
+    const given = Object.keys(changes) as (keyof Settings)[]
+    const chosen = Object.fromEntries(given.map(key => [key, parsed.data[key]]))
+    try {
+      mkdirSync(dirname(this.conf.path), { recursive: true })
+      return await withLock(this.conf.path, stillHeld => {
+        if (!stillHeld()) return null
+        const settings = { ...this.read().settings, ...chosen }
+        return { settings, problem: this.keep(settings) }
+      })
+    } catch (error) {
+      return { settings: { ...before, ...chosen }, problem: notKept(error) }
+    }
+  }
+
+  /** All settings as they were at first. */
+  async reset(): Promise<KeptSettings> {
+    return this.change(DEFAULT_SETTINGS)
+  }
+
+  private keep(settings: Settings): string | null {
+    const reading = this.reading()
+    if (reading.kind === 'newer') return `the settings are not kept: ${reading.problem}`
+    if (reading.kind === 'damaged') renameSync(this.conf.path, this.asidePath())
+    this.conf.store = { text: `${JSON.stringify({ version: SETTINGS_VERSION, ...settings }, null, 2)}\n` }
+    return null
+  }
+
+  private reading(): Reading {
+    const { text } = this.conf.store
+    if (typeof text !== 'string') return { kind: 'sound', settings: DEFAULT_SETTINGS }
+    let kept: Record<string, unknown>
+    try {
+      const value: unknown = JSON.parse(text)
+      if (typeof value !== 'object' || value === null || Array.isArray(value))
+        throw new SyntaxError('no settings')
+      kept = value as Record<string, unknown>
+    } catch {
+      return {
+        kind: 'damaged',
+        settings: DEFAULT_SETTINGS,
+        problem: `the settings in ${this.conf.path} are damaged; their defaults are used`,
+      }
+    }
+    if (typeof kept.version === 'number' && kept.version > SETTINGS_VERSION) {
+      const problem = `${this.conf.path} was written by a newer shortstave; defaults are used and the file is left alone`
+      return { kind: 'newer', settings: DEFAULT_SETTINGS, problem }
+    }
+    const whole = settingsSchema.safeParse(kept)
+    if (whole.success) return { kind: 'sound', settings: whole.data }
+    const damaged = new Set(whole.error.issues.map(({ path }) => String(path[0])))
+    const sound = Object.fromEntries(Object.entries(kept).filter(([key]) => !damaged.has(key)))
+    const mended = settingsSchema.safeParse(sound)
+    return {
+      kind: 'mended',
+      settings: mended.success ? mended.data : DEFAULT_SETTINGS,
+      problem: `settings that cannot be: ${[...damaged].join(', ')}; their defaults are used`,
+    }
+  }
+
+  private asidePath(): string {
+    for (let number = 1; ; number++) {
+      const path = join(dirname(this.conf.path), `settings.damaged-${number}.json`)
+      if (!existsSync(path)) return path
+    }
+  }
+
+  private get conf(): Conf<Record<string, unknown>> {
+    this.opened ??= new Conf<Record<string, unknown>>({
       projectName: 'shortstave',
       projectSuffix: '',
       configName: 'settings',
       ...(this.folder === undefined ? {} : { cwd: this.folder }),
+      // Conditions of the eater are among them: the owner's alone.
+      configFileMode: 0o600,
+      // The text is checked here (zod), so that a damaged file is set aside and never cleared.
       clearInvalidConfig: false,
+      deserialize: text => ({ text }),
+      serialize: ({ text }) => String(text),
     })
+    return this.opened
   }
 }
+
+function problemOf(error: z.ZodError): string {
+  const [issue] = error.issues
+  return `this setting cannot be: ${issue?.path.join('.')}: ${issue?.message}`
+}
+
+const notKept = (error: unknown): string =>
+  `the settings cannot be kept (${reasonOf(error)}); they hold until you leave`

@@ -1,11 +1,14 @@
-import { copyFileSync, existsSync, mkdirSync, readFileSync, renameSync } from 'node:fs'
-import { dirname, join } from 'node:path'
+import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync } from 'node:fs'
+import { basename, dirname, join } from 'node:path'
 import Conf from 'conf'
-import lockfile from 'proper-lockfile'
 import { applyChanges, type ShelfChange } from './changes.ts'
-import { type KeptDocument, NEW_DOCUMENT, readDocument, type ServedPlate } from './document.ts'
-import { redo, remember, undo } from './history.ts'
-import type { Shelf } from './shelf.ts'
+import { type KeptDocument, NEW_DOCUMENT, readDocument, withShelf } from './document.ts'
+import { redo, undo } from './history.ts'
+import { reasonOf } from './reasons.ts'
+import { type ServedPlate, servedPlateSchema, withoutPlate, withPlate } from './served-plate.ts'
+import { type Shelf, shelfSchema } from './shelf.ts'
+import { withLock } from './store-lock.ts'
+import { isUnfinished, writeAtomically } from './store-write.ts'
 
 /** What came of a change. `saved` false: it holds for this session only, and `problem` says why. */
 export interface Kept {
@@ -21,30 +24,272 @@ export interface Kept {
   label: string | null
 }
 
-/** A lock older than this belongs to a process that is gone. */
-const STALE_LOCK_MS = 2_500
-const LOCK = {
-  realpath: false,
-  stale: STALE_LOCK_MS,
-  update: 1_000,
-  retries: { retries: 400, minTimeout: 2, maxTimeout: 25, factor: 1.3, randomize: true },
-}
+/** A change of the document, pure: it may be worked out again on a document that another process wrote meanwhile. */
+type Apply = (document: KeptDocument) => Pick<Kept, 'document' | 'done' | 'problem' | 'label'>
 
-const PLATES_KEPT = 400
+const did = (document: KeptDocument, label: string | null = null) => ({
+  document,
+  done: true,
+  problem: null,
+  label,
+})
+const refused = (document: KeptDocument, problem: string) => ({ document, done: false, problem, label: null })
+
+/** The file must be left alone: a newer program's. */
+class LeaveAlone extends Error {}
 
 /**
  * Where the shelf is kept: one JSON file in the platform's own place for a program's data (`conf`), or in `folder`.
  * Every change takes a lock, reads the file again, applies, and writes atomically, so that two processes lose nothing
- * of each other's. The last good copy stands beside it. Where the disk refuses, the session goes on in memory.
+ * of each other's; reading needs no lock. The last good copy stands beside the file. Where the disk refuses, the
+ * session goes on in memory, on the shelf as it was last seen, and each further change tries again to keep them all.
+ * No method throws.
  */
 export class ShelfStore {
   private readonly folder: string | undefined
   private opened: Conf<Record<string, unknown>> | null = null
+  /** the document as last read or changed */
   private memory: KeptDocument | null = null
-  private trouble: string | null = null
+  /** changes that the disk did not take, in their order */
+  private pending: Apply[] = []
+  /** calls wait for each other, so that changes are kept in the order in which they were made */
+  private queue: Promise<unknown> = Promise.resolve()
 
   constructor(folder?: string) {
     this.folder = folder === '' ? undefined : folder
+  }
+
+  /** What is kept now. A damaged file is set aside and its copy restored, a newer one left alone. */
+  async read(): Promise<Kept> {
+    return this.inTurn(async () => {
+      if (this.pending.length > 0) return this.commit(did)
+      try {
+        const reading = readDocument(this.text() ?? '')
+        if (!reading.ok) return this.commit(did)
+        this.memory = reading.document
+        return { ...did(reading.document), saved: true, notices: [] }
+      } catch {
+        return this.commit(did)
+      }
+    })
+  }
+
+  /** Does some changes, all or none, as one step that can be undone. */
+  async change(changes: readonly ShelfChange[], label: string): Promise<Kept> {
+    return this.inTurn(() =>
+      this.commit(document => {
+        const result = applyChanges(document.shelf, changes)
+        return result.ok ? did(withShelf(document, result.shelf, label)) : refused(document, result.problem)
+      }),
+    )
+  }
+
+  /** Puts another shelf in the place of this one (an import), as one step that can be undone. */
+  async replace(shelf: Shelf, label: string): Promise<Kept> {
+    return this.inTurn(() =>
+      this.commit(document => {
+        const parsed = shelfSchema.safeParse(shelf)
+        if (!parsed.success)
+          return refused(document, `this shelf cannot be kept: ${parsed.error.issues[0]?.message}`)
+        return did(withShelf(document, parsed.data, label))
+      }),
+    )
+  }
+
+  /** Takes the last step back: the shelf is as it was before, and a plate that was served with it is not. */
+  async undo(): Promise<Kept> {
+    return this.inTurn(() =>
+      this.commit(document => {
+        const moved = undo(document.history, document.shelf)
+        if (moved === null) return refused(document, 'there is nothing to undo')
+        const { shelf, history, step } = moved
+        const plates = step.plate === undefined ? document.plates : withoutPlate(document.plates, step.plate)
+        return did({ ...document, shelf, history, plates }, step.label)
+      }),
+    )
+  }
+
+  /** Does the last undone step again. */
+  async redo(): Promise<Kept> {
+    return this.inTurn(() =>
+      this.commit(document => {
+        const moved = redo(document.history, document.shelf)
+        if (moved === null) return refused(document, 'there is nothing to redo')
+        const { shelf, history, step } = moved
+        const plates = step.plate === undefined ? document.plates : withPlate(document.plates, step.plate)
+        return did({ ...document, shelf, history, plates }, step.label)
+      }),
+    )
+  }
+
+  /**
+   * Keeps foods from packets; each is checked by whoever reads them. Give a (pure) function of those that are kept
+   * to add or remove one: a list read earlier may lack what another process has kept since.
+   */
+  async setOwnFoods(
+    ownFoods: readonly unknown[] | ((kept: readonly unknown[]) => readonly unknown[]),
+  ): Promise<Kept> {
+    return this.inTurn(() =>
+      this.commit(document => {
+        const foods = typeof ownFoods === 'function' ? ownFoods(document.ownFoods) : ownFoods
+        return did({ ...document, begun: true, ownFoods: [...foods] })
+      }),
+    )
+  }
+
+  /** Keeps other served plates: a (pure) function of those that are kept. Not a step that `undo` takes back. */
+  async setPlates(plates: (kept: readonly ServedPlate[]) => readonly ServedPlate[]): Promise<Kept> {
+    return this.inTurn(() =>
+      this.commit(document => {
+        const parsed = servedPlateSchema.array().safeParse([...plates(document.plates)])
+        if (!parsed.success)
+          return refused(document, `this plate cannot be kept: ${parsed.error.issues[0]?.message}`)
+        return did({ ...document, plates: parsed.data })
+      }),
+    )
+  }
+
+  /** Takes a served plate's grams off the shelf, as one step, and keeps the plate under its day. */
+  async serve(plate: ServedPlate, takes: readonly ShelfChange[]): Promise<Kept> {
+    return this.inTurn(() =>
+      this.commit(document => {
+        const parsed = servedPlateSchema.safeParse(plate)
+        if (!parsed.success)
+          return refused(document, `this plate cannot be kept: ${parsed.error.issues[0]?.message}`)
+        const result = applyChanges(document.shelf, takes)
+        if (!result.ok) return refused(document, result.problem)
+        return did(withShelf(document, result.shelf, 'serve', parsed.data))
+      }),
+    )
+  }
+
+  private inTurn<T>(work: () => Promise<T>): Promise<T> {
+    const turn = this.queue.then(work)
+    this.queue = turn.catch(() => undefined)
+    return turn
+  }
+
+  /** Locks, reads, applies, writes. Where the disk refuses any of it, the same is done in memory and said. */
+  private async commit(apply: Apply): Promise<Kept> {
+    const notices: string[] = []
+    try {
+      mkdirSync(dirname(this.path), { recursive: true })
+      return await withLock(this.path, stillHeld => this.commitLocked(apply, notices, stillHeld))
+    } catch (error) {
+      return this.inMemory(apply, this.troubleOf(error), notices)
+    }
+  }
+
+  /** Null where the lock was lost before anything was written. */
+  private commitLocked(apply: Apply, notices: string[], stillHeld: () => boolean): Kept | null {
+    const found = this.load(notices, stillHeld)
+    if (found === null) return null
+    let document = found
+    const lines: string[] = []
+    for (const earlier of this.pending) {
+      const result = earlier(document)
+      document = result.document
+      if (!result.done) lines.push(`a change that was not kept at once no longer fits: ${result.problem}`)
+    }
+    if (this.pending.length > 0) lines.push('what changed while nothing could be kept is kept now')
+    const result = apply(document)
+    if (result.document !== found && !this.write(result.document, notices, stillHeld)) return null
+    this.memory = result.document
+    this.pending = []
+    return { ...result, saved: true, notices: [...notices, ...lines] }
+  }
+
+  private inMemory(apply: Apply, trouble: string, notices: string[]): Kept {
+    const before = this.memory ?? this.glimpse()
+    const result = apply(before)
+    if (result.document !== before) this.pending.push(apply)
+    this.memory = result.document
+    return { ...result, problem: result.problem ?? trouble, saved: false, notices }
+  }
+
+  /** The best that can be seen without touching anything. */
+  private glimpse(): KeptDocument {
+    for (const text of [() => this.text(), () => readFileSync(this.copyPath, 'utf8')]) {
+      try {
+        const reading = readDocument(text() ?? '')
+        if (reading.ok) return reading.document
+      } catch {}
+    }
+    return NEW_DOCUMENT
+  }
+
+  /** The document on disk, its damage mended. Null where the lock was lost meanwhile. */
+  private load(notices: string[], stillHeld: () => boolean): KeptDocument | null {
+    const text = this.text()
+    if (text === null) return this.restore(notices, stillHeld)
+    const reading = readDocument(text)
+    if (reading.ok) return reading.document
+    if (reading.newer) throw new LeaveAlone(`${this.path}: ${reading.problem}`)
+    if (!stillHeld()) return null
+    notices.push(
+      `the kept shelf was damaged (${reading.problem}); it is set aside as ${this.setAside(this.path)}`,
+    )
+    return this.restore(notices, stillHeld)
+  }
+
+  private restore(notices: string[], stillHeld: () => boolean): KeptDocument | null {
+    if (!existsSync(this.copyPath)) return NEW_DOCUMENT
+    const reading = readDocument(readFileSync(this.copyPath, 'utf8'))
+    if (reading.ok) {
+      if (!writeAtomically(this.path, textOf(reading.document), { mayReplace: stillHeld })) return null
+      notices.push('the last good copy of the shelf is restored')
+      return reading.document
+    }
+    if (reading.newer) throw new LeaveAlone(`${this.copyPath}: ${reading.problem}`)
+    if (!stillHeld()) return null
+    notices.push(`its copy was damaged too; it is set aside as ${this.setAside(this.copyPath)}`)
+    return NEW_DOCUMENT
+  }
+
+  /** False where the lock was lost and nothing was written. */
+  private write(document: KeptDocument, notices: string[], stillHeld: () => boolean): boolean {
+    const text = textOf(document)
+    this.sweep()
+    if (!writeAtomically(this.path, text, { mayReplace: stillHeld })) return false
+    // From here on the change is kept, whatever comes of its copy.
+    try {
+      writeAtomically(this.copyPath, text, { durable: false, mayReplace: stillHeld })
+    } catch (error) {
+      notices.push(`the shelf is kept, but no copy of it could be written (${reasonOf(error)})`)
+    }
+    return true
+  }
+
+  /** Takes away what processes that were killed while writing left behind. */
+  private sweep(): void {
+    const folder = dirname(this.path)
+    for (const name of readdirSync(folder)) {
+      if ([this.path, this.copyPath].some(path => isUnfinished(name, basename(path)))) {
+        rmSync(join(folder, name), { force: true })
+      }
+    }
+  }
+
+  /** Gives a damaged file a name of its own and returns it. */
+  private setAside(path: string): string {
+    for (let number = 1; ; number++) {
+      const aside = join(dirname(path), `shelf.damaged-${number}.json`)
+      if (existsSync(aside)) continue
+      renameSync(path, aside)
+      return aside
+    }
+  }
+
+  /** The file's text; null where there is none. */
+  private text(): string | null {
+    const { text } = this.conf.store
+    return typeof text === 'string' ? text : null
+  }
+
+  private troubleOf(error: unknown): string {
+    if (error instanceof LeaveAlone) return `${error.message}; changes hold until you leave`
+    const place = this.opened === null ? (this.folder ?? 'its place') : dirname(this.path)
+    return `nothing can be kept in ${place} (${reasonOf(error)}); changes hold until you leave`
   }
 
   /** Opened when first used: where the place itself cannot be, that is trouble to be told, not an exception. */
@@ -54,10 +299,10 @@ export class ShelfStore {
       projectSuffix: '',
       configName: 'shelf',
       ...(this.folder === undefined ? {} : { cwd: this.folder }),
-      // The file is read and checked here (zod), so that a damaged one is set aside and never cleared.
+      // The text is checked here (zod) and written here (only while the lock is held), so that a damaged file is set
+      // aside and never cleared.
       clearInvalidConfig: false,
       deserialize: text => ({ text }),
-      serialize: value => `${JSON.stringify(value.document)}\n`,
     })
     return this.opened
   }
@@ -66,179 +311,9 @@ export class ShelfStore {
     return this.conf.path
   }
 
-  /** What is kept now. Never throws: a damaged file is set aside and its copy restored, a newer one left alone. */
-  async read(): Promise<Kept> {
-    return this.with(document => ({ document, done: true, problem: null, label: null }), false)
-  }
-
-  /** Does some changes, all or none, as one step that can be undone. */
-  async change(changes: readonly ShelfChange[], label: string): Promise<Kept> {
-    return this.with(document => {
-      const result = applyChanges(document.shelf, changes)
-      if (!result.ok) return { document, done: false, problem: result.problem, label: null }
-      return { document: withShelf(document, result.shelf, label), done: true, problem: null, label: null }
-    }, true)
-  }
-
-  /** Puts another shelf in the place of this one (an import), as one step that can be undone. */
-  async replace(shelf: Shelf, label: string): Promise<Kept> {
-    return this.with(
-      document => ({ document: withShelf(document, shelf, label), done: true, problem: null, label: null }),
-      true,
-    )
-  }
-
-  async undo(): Promise<Kept> {
-    return this.step(undo, 'there is nothing to undo')
-  }
-
-  async redo(): Promise<Kept> {
-    return this.step(redo, 'there is nothing to redo')
-  }
-
-  /** Keeps foods from packets; each is checked by whoever reads them. */
-  async setOwnFoods(ownFoods: readonly unknown[]): Promise<Kept> {
-    return this.with(
-      document => ({
-        document: { ...document, begun: true, ownFoods: [...ownFoods] },
-        done: true,
-        problem: null,
-        label: null,
-      }),
-      true,
-    )
-  }
-
-  /** Takes a served plate's grams off the shelf, as one step, and keeps the plate under its day. */
-  async serve(plate: ServedPlate, takes: readonly ShelfChange[]): Promise<Kept> {
-    return this.with(document => {
-      const result = applyChanges(document.shelf, takes)
-      if (!result.ok) return { document, done: false, problem: result.problem, label: null }
-      const served = withShelf(document, result.shelf, 'serve')
-      return {
-        document: { ...served, plates: [...served.plates, plate].slice(-PLATES_KEPT) },
-        done: true,
-        problem: null,
-        label: null,
-      }
-    }, true)
-  }
-
-  private step(move: typeof undo, nothing: string): Promise<Kept> {
-    return this.with(document => {
-      const moved = move(document.history, document.shelf)
-      if (moved === null) return { document, done: false, problem: nothing, label: null }
-      return {
-        document: { ...document, shelf: moved.shelf, history: moved.history },
-        done: true,
-        problem: null,
-        label: moved.label,
-      }
-    }, true)
-  }
-
-  /** Locks, reads, applies, writes. Where the disk refuses any of it, the same is done in memory and said. */
-  private async with(
-    apply: (document: KeptDocument) => Pick<Kept, 'document' | 'done' | 'problem' | 'label'>,
-    writes: boolean,
-  ): Promise<Kept> {
-    const notices: string[] = []
-    if (this.trouble !== null) return this.inMemory(apply, notices)
-    let release: (() => Promise<void>) | null = null
-    try {
-      mkdirSync(dirname(this.path), { recursive: true })
-      release = await lockfile.lock(this.path, LOCK)
-      const document = this.load(notices)
-      if (document === null) return this.inMemory(apply, notices)
-      const result = apply(document)
-      this.memory = result.document
-      if (writes && result.done) {
-        this.keepCopy()
-        this.conf.store = { document: result.document }
-      }
-      return { ...result, saved: true, notices }
-    } catch (error) {
-      const place = this.opened === null ? (this.folder ?? 'its place') : dirname(this.path)
-      this.trouble = `nothing can be kept in ${place} (${reasonOf(error)}); changes hold until you leave`
-      return this.inMemory(apply, notices)
-    } finally {
-      await release?.().catch(() => undefined)
-    }
-  }
-
-  private inMemory(
-    apply: (document: KeptDocument) => Pick<Kept, 'document' | 'done' | 'problem' | 'label'>,
-    notices: string[],
-  ): Kept {
-    const result = apply(this.memory ?? NEW_DOCUMENT)
-    this.memory = result.document
-    return { ...result, problem: result.problem ?? this.trouble, saved: false, notices }
-  }
-
-  /** The document on disk; null (with the trouble named) where it must not be touched. */
-  private load(notices: string[]): KeptDocument | null {
-    if (!existsSync(this.path)) return existsSync(this.copyPath) ? this.restore(notices) : NEW_DOCUMENT
-    const reading = readDocument(readFileSync(this.path, 'utf8'))
-    if (reading.ok) return reading.document
-    if (reading.newer) {
-      this.trouble = `${this.path}: ${reading.problem}; changes hold until you leave`
-      return null
-    }
-    const aside = this.asidePath()
-    renameSync(this.path, aside)
-    notices.push(`the kept shelf was damaged (${reading.problem}); it is set aside as ${aside}`)
-    return this.restore(notices)
-  }
-
-  private restore(notices: string[]): KeptDocument {
-    if (!existsSync(this.copyPath)) return NEW_DOCUMENT
-    const reading = readDocument(readFileSync(this.copyPath, 'utf8'))
-    if (!reading.ok) return NEW_DOCUMENT
-    notices.push('the last good copy of the shelf is restored')
-    this.conf.store = { document: reading.document }
-    return reading.document
-  }
-
-  /** The file as it stands, if it can be read, is the last good copy before it is written anew. */
-  private keepCopy(): void {
-    if (!existsSync(this.path)) return
-    const part = `${this.copyPath}.part`
-    copyFileSync(this.path, part)
-    renameSync(part, this.copyPath)
-  }
-
   private get copyPath(): string {
     return join(dirname(this.path), 'shelf.last-good.json')
   }
-
-  private asidePath(): string {
-    for (let number = 1; ; number++) {
-      const path = join(dirname(this.path), `shelf.damaged-${number}.json`)
-      if (!existsSync(path)) return path
-    }
-  }
 }
 
-function withShelf(document: KeptDocument, shelf: Shelf, label: string): KeptDocument {
-  return {
-    ...document,
-    begun: true,
-    shelf,
-    history: remember(document.history, label, document.shelf, shelf),
-  }
-}
-
-const REASONS: Record<string, string> = {
-  ENOSPC: 'the disk is full',
-  EROFS: 'the disk can only be read',
-  EACCES: 'no permission',
-  EPERM: 'no permission',
-  ENOTDIR: 'part of the path is not a folder',
-  EEXIST: 'part of the path is not a folder',
-  ELOCKED: 'another shortstave holds it',
-}
-
-function reasonOf(error: unknown): string {
-  const { code, message } = error as NodeJS.ErrnoException
-  return REASONS[code ?? ''] ?? message
-}
+const textOf = (document: KeptDocument): string => `${JSON.stringify(document)}\n`
