@@ -1,8 +1,8 @@
 import { scoreBasis } from '../foods/score.ts'
 import { planningRefusal, stepBack } from '../kitchen/conditions.ts'
 import { mealTargetG } from '../nutrition/targets.ts'
-import { type LiftContext, liftContext } from '../pairing/lift.ts'
-import type { PairingProblem, ShelfFood } from '../pairing/problem.ts'
+import { liftContext, liftOptions } from '../pairing/lift.ts'
+import type { LiftOption, PairingProblem, ShelfFood } from '../pairing/problem.ts'
 import type { Settings } from '../shelf/settings.ts'
 import type { Knowledge, State } from './state.ts'
 
@@ -37,9 +37,11 @@ export function problemOf({ shelf, settings }: State, { table }: Knowledge): Pai
   }
 }
 
-/** What a lift of the plate may use. */
-export const liftContextOf = (state: State, knowledge: Knowledge): LiftContext =>
-  liftContext(problemOf(state, knowledge))
+/** What would lift the plate: first what needs no shopping. The keys 1 to 3 go by this order. */
+export function liftsOf(state: State, knowledge: Knowledge): LiftOption[] {
+  const options = liftOptions(state.plate, liftContext(problemOf(state, knowledge)))
+  return options.sort((a, b) => Number(b.onShelf) - Number(a.onShelf))
+}
 
 /** Why nothing may be planned with what the settings tell, or null. */
 export const refusalOf = (settings: Settings, { table }: Knowledge): string | null =>

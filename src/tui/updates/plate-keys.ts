@@ -1,11 +1,10 @@
 import type { Food } from '../../foods/food.ts'
 import type { Portion } from '../../nutrition/protein-source.ts'
-import { liftOptions } from '../../pairing/lift.ts'
 import type { ShelfChange } from '../../shelf/changes.ts'
 import { applyChanges } from '../../shelf/changes.ts'
 import type { Key } from '../keys.ts'
 import { foodPage } from '../pages.ts'
-import { liftContextOf } from '../problem-of.ts'
+import { liftsOf } from '../problem-of.ts'
 import { type Knowledge, only, type State, type Updated } from '../state.ts'
 import { asked } from './changes.ts'
 import { openPrompt } from './prompt-keys.ts'
@@ -121,7 +120,7 @@ function lettered(state: State, letter: string, knowledge: Knowledge): Updated {
     case '1':
     case '2':
     case '3': {
-      const option = liftOptions(state.plate, liftContextOf(state, knowledge))[Number(letter) - 1]
+      const option = liftsOf(state, knowledge)[Number(letter) - 1]
       if (option === undefined) return only({ ...state, message: 'There is no such lift.' })
       const there = state.plate.find(portion => portion.food.id === option.food.id)
       const plate =

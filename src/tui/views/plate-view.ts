@@ -4,8 +4,7 @@ import { allergenName } from '../../kitchen/allergen-names.ts'
 import { cautionsFor, STANDING_NOTE } from '../../kitchen/cautions.ts'
 import { STAVE_NAMES } from '../../nutrition/amino-acids.ts'
 import { type PlateScore, scorePlate } from '../../nutrition/plate-score.ts'
-import { liftOptions } from '../../pairing/lift.ts'
-import { liftContextOf, targetOf } from '../problem-of.ts'
+import { liftsOf, targetOf } from '../problem-of.ts'
 import type { Knowledge, State } from '../state.ts'
 import { drawStaves, stavesAsText } from '../staves/draw-staves.ts'
 import { fillOf, inFoodColour, letterOf } from '../staves/palette.ts'
@@ -33,7 +32,12 @@ export function plateView(state: State, knowledge: Knowledge): string[] {
       '',
       '   Tab to the bench and take a pairing, or press a to put a food on it.',
     ]
-    return fitted(state, top, [...empty, ...todayLines(state, knowledge)], foot)
+    return fitted(
+      state,
+      top,
+      [...empty, ...todayLines(state, knowledge)].map(line => clip(line, columns - 1)),
+      foot,
+    )
   }
   const room = state.rows - 1 - top.length - foot.length
   const list = foodLines(state, score, knowledge.colour)
@@ -95,7 +99,7 @@ function foodLines(state: State, score: PlateScore<Food>, colour: boolean): stri
 }
 
 function liftLines(state: State, knowledge: Knowledge): string[] {
-  const options = liftOptions(state.plate, liftContextOf(state, knowledge))
+  const options = liftsOf(state, knowledge)
   if (options.length === 0) return []
   return options.map((option, i) => {
     const amount = option.deltaG < 0 ? `${grams(-option.deltaG)} less` : `${grams(option.deltaG)} more`
@@ -103,7 +107,7 @@ function liftLines(state: State, knowledge: Knowledge): string[] {
     const what = there ? `${amount} ${option.food.name}` : `${grams(option.deltaG)} ${option.food.name}`
     const label = i === 0 ? ' would lift it: ' : '                '
     return clip(
-      `${label}${i + 1} ${what}${option.onShelf ? '' : ' (not on your shelf)'} to ${wholeScore(option.diaas)}`,
+      `${label}${i + 1} to ${wholeScore(option.diaas)}: ${what}${option.onShelf ? '' : ' (not on your shelf)'}`,
       state.columns - 1,
     )
   })

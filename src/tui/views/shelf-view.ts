@@ -34,7 +34,7 @@ export function shelfView(state: State, knowledge: Knowledge): string[] {
     section = row.kind
     body.push(rowLine(row, first + i === cursor, state, knowledge))
   })
-  if (rows.length === 0) body.push('', ...emptyLines(state))
+  if (rows.length === 0) body.push('', ...emptyLines(state).map(line => clip(line, state.columns - 1)))
   return fitted(state, top, body, foot)
 }
 
@@ -116,12 +116,18 @@ function rowLine(row: ShelfRow, under: boolean, state: State, knowledge: Knowled
       : row.kind === 'here'
         ? `${Math.round((row.item.grams / 100) * food.per100g.proteinG)} g protein`
         : `${food.per100g.proteinG.toFixed(1)} g / 100 g`
-  const right = `${padEnd(mark, 9)} ${padStart(amount, 7)}${wide ? ` ${padEnd(days, 10)}` : ` ${padEnd(days, 5)}`} ${padStart(protein, wide ? 14 : 13)} ${sketch}`
+  const right = [
+    padEnd(mark, 9),
+    padStart(amount, 7),
+    padEnd(days, wide ? 10 : 5),
+    ...(columns < 72 ? [] : [padStart(protein, 14)]),
+    sketch,
+  ].join(' ')
   const name = food?.name ?? (row.kind === 'here' ? `${row.item.food} (not in the table)` : '')
-  const room = Math.max(10, columns - widthOf(right) - 5)
+  const room = Math.max(8, columns - widthOf(right) - 5)
   const clipped = clip(name, room)
   const filled = padEnd(under ? STYLE.bold(clipped) : withMarks(clipped, row.matched), room)
-  return `${under ? ' ▸ ' : '   '}${filled} ${mark === '' ? right : right}`
+  return `${under ? ' ▸ ' : '   '}${filled} ${right}`
 }
 
 /** The letters that the find line met, underlined. */

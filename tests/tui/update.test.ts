@@ -1,0 +1,250 @@
+import fc from 'fast-check'
+import { describe, expect, it } from 'vitest'
+import { EMPTY_SHELF } from '../../src/shelf/shelf.ts'
+import { update } from '../../src/tui/update.ts'
+import { view } from '../../src/tui/view.ts'
+import { answered, GALLEY, knowledge, opened, plain, typed } from './helpers.ts'
+
+describe('shelf: letters find, signs act', () => {
+  it('adds a food of the table in a measure that people write', () => {
+    const { state, effects } = typed(opened(EMPTY_SHELF), 'chickpeas canned', 'enter', '2 cans', 'enter')
+    expect(state.shelf.items).toHaveLength(1)
+    expect(state.shelf.items[0]!.food).toBe('chickpeas-canned')
+    expect(state.shelf.items[0]!.grams).toBeGreaterThan(400)
+    expect(state.find).toBe('')
+    expect(effects.map(({ effect }) => effect)).toEqual(['change', 'pair'])
+  })
+
+  it('takes a bare number for grams, and proposes the usual amount', () => {
+    const asked = typed(opened(EMPTY_SHELF), 'tofu', 'enter').state
+    expect(asked.prompt!.text).toBe('170 g')
+    expect(typed(asked, 'enter').state.shelf.items[0]).toMatchObject({ food: 'tofu-firm', grams: 170 })
+    expect(typed(asked, '350', 'enter').state.shelf.items[0]).toMatchObject({ grams: 350 })
+  })
+
+  it.each(['lots', '-5 g', '0 g', '100 kg', '3 bananas'])(
+    'keeps the line open, with the reason, for the amount "%s"',
+    text => {
+      const { state } = typed(opened(EMPTY_SHELF), 'tofu', 'enter', 'clear-line', text, 'enter')
+      expect(state.prompt?.problem).toBeTruthy()
+      expect(state.shelf.items).toEqual([])
+      expect(typed(state, 'escape').state.prompt).toBeNull()
+    },
+  )
+
+  it('marks by one key, and takes the mark off by the same', () => {
+    const once = typed(opened(), '!').state
+    expect(once.shelf.items[0]!.mark).toBe('use-up')
+    expect(typed(once, '!').state.shelf.items[0]!.mark).toBe('')
+    expect(typed(once, '.').state.shelf.items[0]!.mark).toBe('hold-back')
+  })
+
+  it('takes off, and asks the store to undo', () => {
+    const { state, effects } = typed(opened(), 'down', '#', '<')
+    expect(state.shelf.items.map(({ food }) => food)).not.toContain('rice-brown-dry')
+    expect(effects.map(({ effect }) => effect)).toEqual(['change', 'pair', 'undo'])
+    const back = update(
+      state,
+      {
+        event: 'kept',
+        shelf: GALLEY,
+        begun: true,
+        served: [],
+        problem: null,
+        label: 'take off rice',
+        restored: true,
+      },
+      knowledge,
+    )
+    expect(back.state.shelf).toEqual(GALLEY)
+    expect(back.state.message).toContain('Undone: take off rice')
+  })
+
+  it('keeps the sample with the first change, and can start an empty shelf instead', () => {
+    const sample = opened(GALLEY, { sample: true })
+    const [change] = typed(sample, '!').effects
+    expect(change).toMatchObject({ effect: 'change', sample: GALLEY })
+    const empty = typed(sample, '0')
+    expect(empty.state.shelf).toEqual(EMPTY_SHELF)
+    expect(empty.effects[0]).toMatchObject({ effect: 'replace', shelf: EMPTY_SHELF })
+  })
+
+  it('orders by use-by, protein and name', () => {
+    const first = (state: ReturnType<typeof opened>) =>
+      plain(view(state, knowledge))
+        .split('\n')
+        .find(line => line.includes('▸'))
+    const byDay = typed(opened(), '/').state
+    expect(first(byDay)).toContain('Tofu')
+    expect(first(typed(byDay, '/').state)).toContain('Lentils')
+    expect(first(typed(byDay, '//').state)).toContain('Lentils')
+    expect(first(byDay)).toContain('2 d')
+  })
+
+  it('reads a pasted list, shows what it could not understand, and guesses nothing', () => {
+    const text = '- 2 cups dry red lentils\n- one can chickpeas\nsome rice\nxyzzy 200 g\n1 kg potatoes'
+    const pasted = typed(opened(EMPTY_SHELF), { key: 'paste', text }).state
+    expect(pasted.pasted!.map(({ reading }) => reading.ok)).toEqual([true, true, false, false, true])
+    const screen = plain(view(pasted, knowledge))
+    expect(screen).toContain('5 lines, 3 understood')
+    expect(screen).toContain('✗ some rice')
+    // Enter on the first row puts the three there; the other two stay to be mended.
+    const put = typed(pasted, 'enter').state
+    expect(put.shelf.items).toHaveLength(3)
+    expect(put.pasted).toHaveLength(2)
+    const mended = typed(
+      put,
+      'enter',
+      'clear-line',
+      '300 g dry brown rice',
+      'enter',
+      'down',
+      '#',
+      'up',
+      'up',
+      'enter',
+    ).state
+    expect(mended.pasted).toBeNull()
+    expect(mended.shelf.items.map(({ food }) => food)).toContain('rice-brown-dry')
+  })
+})
+
+describe('bench', () => {
+  const bench = answered(opened(GALLEY, { screen: 'bench' }))
+
+  it('asks for pairings with every change, and drops an answer to an old question', () => {
+    const { state, effects } = typed(bench, 'e')
+    expect(effects).toEqual([
+      { effect: 'settings', settings: state.settings },
+      { effect: 'pair', question: state.question },
+    ])
+    expect(state.stale).toBe(true)
+    const late = update(
+      state,
+      { event: 'paired', question: bench.question, answer: { reached: false, pairings: [], reason: 'old' } },
+      knowledge,
+    )
+    expect(late.state.answer).toBe(bench.answer)
+  })
+
+  it('keeps settings within bounds, with the reason', () => {
+    expect(typed(bench, 't', '40', 'enter').state.settings.targetG).toBe(40)
+    expect(typed(bench, 't', '4000', 'enter').state.prompt!.problem).toContain('from 1 to 200')
+    expect(typed(bench, 'b', '70', 'enter').state.settings).toMatchObject({ bodyMassKg: 70, targetG: null })
+    expect(typed(bench, 'a', 'gluten, soya', 'enter').state.settings.without).toEqual(['gluten', 'soy'])
+    expect(typed(bench, 'a', 'kryptonite', 'enter').state.prompt!.problem).toContain('kryptonite')
+    expect(typed(bench, 'n', '2.5', 'enter').state.prompt!.problem).toContain('whole number')
+  })
+
+  it('never offers a pattern of young children', () => {
+    let state = bench
+    for (let i = 0; i < 6; i++) {
+      state = typed(state, 'p').state
+      expect(knowledge.table.patternById.get(state.settings.pattern)!.planning).toBe(true)
+    }
+  })
+
+  it('gives a reason instead of pairings where nothing may be planned', () => {
+    const { state } = typed(
+      { ...bench, settings: { ...bench.settings, conditions: ['phenylketonuria'] } },
+      'e',
+    )
+    expect(state.answer).toBeNull()
+    expect(plain(view(state, knowledge))).toMatch(/phenylketonuria/i)
+  })
+
+  it('takes a pairing to the plate, and compares two', () => {
+    const plate = typed(bench, 'enter').state
+    expect(plate.screen).toBe('plate')
+    expect(plate.plate).toEqual(bench.answer!.pairings[0]!.portions)
+    const two = typed(bench, 'c', 'down').state
+    expect(plain(view(two, knowledge))).toContain('│')
+  })
+})
+
+describe('plate', () => {
+  const plate = typed(answered(opened(GALLEY, { screen: 'bench' })), 'enter').state
+
+  it('changes amounts by steps and by typing, and goes back', () => {
+    const first = plate.plate[0]!
+    const more = typed(plate, 'right').state
+    expect(more.plate[0]!.grams).toBeGreaterThan(first.grams)
+    expect(typed(more, 'z').state.plate).toEqual(plate.plate)
+    expect(typed(plate, 'enter', '100', 'enter').state.plate[0]!.grams).toBe(100)
+  })
+
+  it('adds a food in words and takes one off', () => {
+    const added = typed(plate, 'a', '20 g tahini', 'enter').state
+    expect(added.plate.at(-1)).toMatchObject({ grams: 20 })
+    expect(added.plate.at(-1)!.food.id).toBe('tahini')
+    expect(typed(added, 'x').state.plate).toHaveLength(plate.plate.length)
+  })
+
+  it('tries a lift that scores what it says, and goes back', () => {
+    const lentils = { food: knowledge.table.foodById.get('lentils-red-dry')!, grams: 80 }
+    const alone = { ...plate, plate: [lentils] }
+    const screen = plain(view(alone, knowledge))
+    const said = Number(/would lift it: 1 to (\d+)/.exec(screen)![1])
+    const tried = typed(alone, '1').state
+    expect(tried.plate).not.toEqual([lentils])
+    expect(plain(view(tried, knowledge))).toContain(`DIAAS ${said} `)
+    expect(typed(tried, 'z').state.plate).toEqual([lentils])
+  })
+
+  it('serves once asked: grams off the shelf, the plate under today', () => {
+    const asks = typed(plate, 's').state
+    expect(asks.asksServe).toBe(true)
+    expect(typed(asks, 'n').effects).toEqual([])
+    const { state, effects } = typed(asks, 'y')
+    expect(effects[0]).toMatchObject({ effect: 'serve', plate: { day: '2026-06-01', servings: 1 } })
+    const used = plate.plate[0]!
+    const before = GALLEY.items.find(({ food }) => food === used.food.id)!.grams
+    expect(state.shelf.items.find(({ food }) => food === used.food.id)?.grams ?? 0).toBeCloseTo(
+      before - used.grams,
+      6,
+    )
+  })
+
+  it('makes a card, and refuses a time that is none', () => {
+    expect(typed(plate, 'c', '19:00', 'enter').state.page!.title).toBe('Card')
+    expect(typed(plate, 'c', '27:99', 'enter').state.prompt!.problem).toContain('no time of day')
+  })
+})
+
+describe('any keys at all', () => {
+  const keys = fc.oneof(
+    fc.constantFrom(
+      'enter',
+      'escape',
+      'tab',
+      'back-tab',
+      'backspace',
+      'delete',
+      'up',
+      'down',
+      'left',
+      'right',
+      'home',
+      'end',
+      'page-down',
+    ),
+    fc.string({ minLength: 1, maxLength: 1, unit: 'grapheme' }),
+    fc.constantFrom('l', 'e', '1', 'a', 's', 'y', '#', '!', '=', '?', '0', 'c', 'w', 'x'),
+  )
+  it('never throw, never leave the screen wider or higher than the terminal, never lose the shelf by themselves', () => {
+    fc.assert(
+      fc.property(
+        fc.array(keys, { maxLength: 25 }),
+        fc.constantFrom([80, 24], [60, 16], [140, 45], [40, 10]),
+        (pressed, [columns, rows]) => {
+          const state = typed(opened(GALLEY, { columns: columns!, rows: rows! }), ...pressed).state
+          const lines = view(state, knowledge)
+          expect(lines.length).toBeLessThanOrEqual(rows!)
+          for (const line of plain(lines).split('\n')) expect([...line].length).toBeLessThanOrEqual(columns!)
+          expect(state.shelf.items.every(({ grams }) => grams > 0)).toBe(true)
+        },
+      ),
+      { numRuns: 300 },
+    )
+  })
+})
