@@ -14,7 +14,7 @@ const MAY_IMPORT: Record<string, string[]> = {
   prep: ['pairing', 'foods', 'nutrition'],
   cli: ['tui', 'kitchen', 'prep', 'pairing', 'shelf', 'foods', 'nutrition'],
   tui: ['kitchen', 'prep', 'pairing', 'shelf', 'foods', 'nutrition'],
-  build: ['kitchen', 'foods', 'nutrition'],
+  build: ['tui', 'shelf', 'pairing', 'kitchen', 'foods', 'nutrition'],
 }
 
 /** Node's own modules that reach the world, and who may import them. */

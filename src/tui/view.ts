@@ -1,7 +1,7 @@
 import type { Knowledge, State } from './state.ts'
 import { STYLE } from './style.ts'
 import { clip, wrapLines } from './text/lines.ts'
-import { widthOf } from './text/width.ts'
+import { widthOf, withoutStyles } from './text/width.ts'
 import { PAGE_FRAME } from './updates/page-keys.ts'
 import { benchView } from './views/bench-view.ts'
 import { fitted, keyLine, LEAST, promptLines, rule } from './views/frame.ts'
@@ -50,8 +50,7 @@ function pageView(state: State): string[] {
 
 /** A line of a page made for a wider window: cut, without its styles where it has any. */
 const narrowed = (line: string, width: number): string =>
-  // biome-ignore lint/suspicious/noControlCharactersInRegex: styles begin with an escape
-  widthOf(line) <= width ? line : clip(line.replace(/\u001b\[[0-9;]*m/g, ''), width)
+  widthOf(line) <= width ? line : clip(withoutStyles(line), width)
 
 /** A pasted list: what was understood, and what is to be mended. */
 function pastedView(state: State): string[] {

@@ -6,12 +6,16 @@ const COMBINING = /\p{M}|\p{Cf}/u
 // biome-ignore lint/suspicious/noControlCharactersInRegex: the program's own colours begin with an escape
 const STYLES = /\u001b\[[0-9;]*m/g
 
+/** A text without the program's own styles. */
+export const withoutStyles = (text: string): string =>
+  text.includes('\u001b') ? text.replace(STYLES, '') : text
+
 /**
  * The columns that a text takes in a terminal: styles and combining marks none, wide letters (Chinese, Japanese,
  * emoji) two. Without the tables of emoji sequences, whose loading would cost each one-shot command its start.
  */
 export function widthOf(text: string): number {
-  const plain = text.includes('\u001b') ? text.replace(STYLES, '') : text
+  const plain = withoutStyles(text)
   if (SIMPLE.test(plain)) return plain.length
   let width = 0
   for (const letter of plain) {

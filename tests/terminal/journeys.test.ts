@@ -1,0 +1,195 @@
+import { readFileSync } from 'node:fs'
+import { join } from 'node:path'
+import { afterEach, describe, expect, it } from 'vitest'
+import { KEYS, Screen } from './screen.ts'
+
+const opened: Screen[] = []
+function start(options: ConstructorParameters<typeof Screen>[0] = {}): Screen {
+  const screen = new Screen(options)
+  opened.push(screen)
+  return screen
+}
+afterEach(() => {
+  for (const screen of opened.splice(0)) screen.close()
+})
+
+describe('in a real terminal', () => {
+  it('first start: the sample shelf, said so, and the pairings a key away', async () => {
+    const screen = start()
+    await screen.shows('the sample shelf')
+    await screen.shows('Lentils, red, dry')
+    await screen.shows('0 starts an empty shelf')
+    expect(screen.lines().at(-2)).toContain('? all keys')
+    screen.type(KEYS.tab)
+    await screen.shows(/DIAAS \d+ \(\d+-\d+\)/)
+    screen.type('?')
+    await screen.shows('letters find, signs act')
+    screen.type(KEYS.escape)
+    await screen.shows('target 35 g')
+  })
+
+  it('from an empty shelf to a served plate, by the keys that the screen shows', async () => {
+    const screen = start({ columns: 120, rows: 40 })
+    await screen.shows('the sample shelf')
+    screen.type('0')
+    await screen.shows('An empty shelf')
+    for (const [find, name, amount] of [
+      ['red lentils dry', 'Lentils, red, dry', '2 cups'],
+      ['brown rice dry', 'Rice, brown, dry', '1 kg'],
+      ['tofu firm', 'Tofu, firm', '600 g'],
+      ['sesame', 'Sesame seeds', '100'],
+    ] as const) {
+      screen.type(find)
+      await screen.shows(`▸ ${name}`)
+      screen.type(KEYS.enter)
+      await screen.shows(`How much ${name}`)
+      screen.type(amount)
+      screen.type(KEYS.enter)
+      await screen.shows(`${name}: `)
+      await screen.shows('put on the shelf')
+    }
+    screen.type(KEYS.tab)
+    await screen.shows(/▸ 1 .* g/)
+    screen.type('n')
+    await screen.shows('Servings')
+    screen.type(`2${KEYS.enter}`)
+    await screen.shows('2 servings')
+    await screen.shows(/▸ 1 .* g/)
+    screen.type('w')
+    await screen.shows(/shortest|short of|needs no partner/)
+    screen.type(KEYS.enter)
+    await screen.shows('35 g wanted')
+    await screen.shows('His')
+    screen.type('c')
+    await screen.shows('Eat at')
+    screen.type(`19:00${KEYS.enter}`)
+    await screen.shows('Card for 2 servings')
+    screen.type(KEYS.escape)
+    await screen.shows('35 g wanted')
+    screen.type('s')
+    await screen.shows('Serve: take 2 of these plates off the shelf?')
+    screen.type('y')
+    await screen.shows('Served: 2 servings')
+    // What was served is off the shelf that is kept, and can be undone.
+    screen.type(KEYS.tab)
+    await screen.shows('your shelf')
+    screen.type('<')
+    await screen.shows('Undone: serve')
+    screen.type(KEYS.ctrlC)
+    expect(await screen.ends()).toBe(0)
+    const kept = JSON.parse(readFileSync(join(screen.home, 'kept', 'shelf.json'), 'utf8'))
+    expect(kept.shelf.items.map((item: { food: string }) => item.food).sort()).toEqual([
+      'lentils-red-dry',
+      'rice-brown-dry',
+      'sesame-seeds',
+      'tofu-firm',
+    ])
+    expect(kept.shelf.items.find((item: { food: string }) => item.food === 'tofu-firm').grams).toBe(600)
+  })
+
+  it('takes a pasted, messy list, and shows what is to be mended', async () => {
+    const screen = start({ columns: 100, rows: 30 })
+    await screen.shows('the sample shelf')
+    screen.type('0')
+    await screen.shows('An empty shelf')
+    screen.paste('* 2 cups dry red lentils\n* 1 can chickpeas\n* xyzzy 200 g\n* half a kilo of rolled oats\n')
+    await screen.shows('pasted: 4 lines')
+    await screen.shows('✗ xyzzy 200 g')
+    screen.type(KEYS.enter)
+    await screen.shows('to be mended')
+    screen.type(KEYS.enter)
+    await screen.shows('How should this line read?')
+    screen.type(`${KEYS.ctrlU}200 g tahini${KEYS.enter}`)
+    await screen.shows('✓')
+    screen.type(`${KEYS.up}${KEYS.enter}`)
+    await screen.shows('Tahini')
+    await screen.hides('pasted:')
+  })
+
+  it('keeps changes, undoes them, and undoes them after a restart too', async () => {
+    const first = start()
+    await first.shows('the sample shelf')
+    first.type('!')
+    await first.shows('to be used up')
+    await first.shows('your shelf')
+    first.type('#')
+    await first.shows('is off the shelf')
+    first.type(KEYS.ctrlC)
+    expect(await first.ends()).toBe(0)
+    const second = start({ home: first.home })
+    await second.shows('your shelf')
+    await second.shows('▸ Lentils, brown, dry')
+    second.type('<')
+    await second.shows('Undone')
+    await second.shows('▸ Lentils, red, dry')
+    second.type('>')
+    await second.shows('Done again')
+    await second.shows('▸ Lentils, brown, dry')
+  })
+
+  it('draws anew when the window changes in the middle, and says kindly when it is too small', async () => {
+    const screen = start({ columns: 120, rows: 40 })
+    await screen.shows('the sample shelf')
+    screen.type(KEYS.tab)
+    await screen.shows(/DIAAS/)
+    screen.type(KEYS.enter)
+    await screen.shows('35 g wanted')
+    screen.resize(80, 24)
+    await screen.shows('His')
+    expect(Math.max(...screen.lines().map(line => line.length))).toBeLessThanOrEqual(80)
+    screen.resize(50, 12)
+    await screen.shows('needs 60 by')
+    screen.resize(100, 30)
+    await screen.shows('35 g wanted')
+    expect(screen.lines().filter(line => line.includes('shelf ···'))).toHaveLength(1)
+  })
+
+  it('leaves the terminal as it was on Ctrl+C: its screen, its cursor, its pastes', async () => {
+    const screen = start()
+    await screen.shows('the sample shelf')
+    expect(screen.isAlternate()).toBe(true)
+    screen.type('len')
+    await screen.shows('> len')
+    screen.type(KEYS.ctrlC)
+    expect(await screen.ends()).toBe(0)
+    await new Promise(resolve => setTimeout(resolve, 100))
+    expect(screen.isAlternate()).toBe(false)
+    const after = screen.written.slice(screen.written.lastIndexOf('\u001b[?1049l') - 40)
+    expect(after).toContain('\u001b[?25h')
+    expect(after).toContain('\u001b[?2004l')
+  })
+
+  it('uses no colour under NO_COLOR, and the letters still tell foods apart', async () => {
+    const screen = start({ env: { NO_COLOR: '1' } })
+    await screen.shows('the sample shelf')
+    screen.type(KEYS.tab)
+    await screen.shows(/DIAAS/)
+    screen.type(KEYS.enter)
+    await screen.shows(/█a█/)
+    await screen.shows(/▒b▒/)
+    // biome-ignore lint/suspicious/noControlCharactersInRegex: colours begin with an escape
+    expect(screen.written).not.toMatch(/\u001b\[[0-9;]*(3[0-7]|38;|4[0-7]|48;|9[0-7])[0-9;]*m/)
+  })
+
+  it('speaks in words to a screen reader', async () => {
+    const screen = start({ env: { INK_SCREEN_READER: 'true' } })
+    await screen.shows('Lentils, red, dry')
+    screen.type(KEYS.tab)
+    await screen.shows('In % of the pattern')
+  })
+
+  it('loses no key of 120 at 60 a second', async () => {
+    const screen = start({ columns: 140, rows: 30 })
+    await screen.shows('the sample shelf')
+    const text = 'lentils red dry brown rice tofu oats barley '.repeat(3).slice(0, 78)
+    for (const letter of text) {
+      screen.type(letter)
+      await new Promise(resolve => setTimeout(resolve, 1000 / 60))
+    }
+    await screen.shows(`> ${text.trimEnd()}`)
+    screen.type(KEYS.backspace.repeat(text.length))
+    await screen.shows('type to find a food')
+    screen.type(KEYS.down.repeat(5))
+    await screen.shows(/▸ (?!Lentils, red)/)
+  })
+})
