@@ -2,11 +2,11 @@ import { render } from 'ink'
 import type { Table } from '../foods/table.ts'
 import { DEFAULT_SETTINGS } from '../shelf/default-settings.ts'
 import type { Shelf } from '../shelf/shelf.ts'
-import { Edge, type Opened } from './edge.ts'
+import type { Edge, Opened } from './edge.ts'
 import { Frame } from './frame.tsx'
-import { readKeys } from './keys.ts'
-import { firstState } from './state.ts'
-import { view } from './view.ts'
+import { type Key, readKeys } from './keys.ts'
+import { firstState, type Knowledge } from './state.ts'
+import { shelfView } from './views/shelf-view.ts'
 
 export interface ScreensOptions extends Opened {
   table: Table
@@ -50,6 +50,21 @@ export async function runScreens(options: ScreensOptions): Promise<number> {
     message: '',
   })
 
+  process.on('exit', leave)
+  for (const signal of ['SIGTERM', 'SIGHUP'] as const) process.on(signal, () => ended())
+  if (!options.spoken) stdout.write(ENTER)
+  stdin.setRawMode(true)
+  // The first frame is the shelf as it stands: it needs neither the search nor what carries keys out, and those are
+  // loaded while it is looked at. Keys that are typed meanwhile wait in the input.
+  const bare = { table: options.table, today: dayOf(options.now()), colour: options.colour } as Knowledge
+  const screen = render(<Frame lines={shelfView(state, bare)} />, {
+    exitOnCtrlC: false,
+    patchConsole: false,
+    maxFps: 120,
+  })
+  await new Promise(resolve => setImmediate(resolve))
+  const [{ Edge: Machine }, { view }] = await Promise.all([import('./edge.ts'), import('./view.ts')])
+
   let timer: NodeJS.Timeout | undefined
   let drawnAt = 0
   const draw = () => {
@@ -61,39 +76,28 @@ export async function runScreens(options: ScreensOptions): Promise<number> {
       if (!left) screen.rerender(<Frame lines={view(edge.state, edge.knowledge)} />)
     }, wait)
   }
-  const edge = new Edge({
-    state,
+  const edge: Edge = new Machine({
+    state: { ...state, ...size() },
     table: options.table,
-    today: dayOf(options.now()),
+    today: bare.today,
     colour: options.colour,
     opened: options,
     draw,
     quit: () => ended(),
-  })
-
-  process.on('exit', leave)
-  for (const signal of ['SIGTERM', 'SIGHUP'] as const) process.on(signal, () => ended())
-  if (!options.spoken) stdout.write(ENTER)
-  stdin.setRawMode(true)
-  const screen = render(<Frame lines={view(edge.state, edge.knowledge)} />, {
-    exitOnCtrlC: false,
-    patchConsole: false,
-    maxFps: 120,
   })
   let rest = ''
   stdin.setEncoding('utf8')
   stdin.on('data', (chunk: string) => {
     const read = readKeys(rest + chunk)
     rest = read.rest
-    edge.send(...read.keys.map(key => ({ event: 'key', key }) as const))
+    edge.send(...read.keys.map((key: Key) => ({ event: 'key', key }) as const))
   })
   stdin.resume()
   stdout.on('resize', () => {
     screen.clear()
     edge.send({ event: 'resize', ...size() })
   })
-  // The first frame is out before anything is read from the disk.
-  setImmediate(() => edge.start())
+  edge.start()
   await end
   await edge.settled()
   screen.unmount()
