@@ -4,6 +4,7 @@ import { inColumns } from '../tui/text/lines.ts'
 import { readArguments, readNumber } from './arguments.ts'
 import { answer, type Command, jsonText, NO_ANSWER, Refusal } from './command.ts'
 import { hitJson } from './json/food-json.ts'
+import { settingsOf } from './kept-settings.ts'
 import { readPattern } from './options.ts'
 import { styleOf } from './text/style.ts'
 
@@ -17,7 +18,7 @@ find WORDS [--most N] [--pattern ID] [--json]
   shortstave find chikpea boiled
   shortstave find rajma
 
-Each row: id, name, protein per 100 g, the food's own DIAAS and its shortest stave.
+Each row: id, name, protein per 100 g, the food's own DIAAS, its shortest stave, and × what your settings leave out.
   --most N      at most so many rows (10)
   --pattern ID  the scoring pattern (fao-2013-over-3y)
   --json        the rows as JSON, best first`,
@@ -39,12 +40,15 @@ Each row: id, name, protein per 100 g, the food's own DIAAS and its shortest sta
     if (options.json) return { code, out: jsonText(hits), err: foods.length === 0 ? nothing : '' }
     if (foods.length === 0) return { code, out: '', err: nothing }
     const style = styleOf(world.colour)
-    const rows = hits.map(hit => [
+    const { without } = await settingsOf(world)
+    const avoided = foods.map(food => food.allergens.filter(id => without.includes(id)))
+    const rows = hits.map((hit, i) => [
       style.bold(hit.id),
       hit.name,
       `${hit.protein_g_per_100g.toFixed(1)} g / 100 g`,
       hit.diaas === null ? 'no protein to score' : `DIAAS ${wholeScore(hit.diaas)}`,
       hit.limiting ?? '',
+      avoided[i]!.length === 0 ? '' : `× ${avoided[i]!.join(', ')}`,
     ])
     return answer(`${inColumns(rows, [2]).join('\n')}\n`)
   },

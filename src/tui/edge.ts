@@ -1,3 +1,5 @@
+import type { OwnFood } from '../foods/own-food.ts'
+import { withOwnFoods } from '../foods/own-table.ts'
 import type { Finder } from '../foods/search.ts'
 import { createFinder } from '../foods/search.ts'
 import type { Table } from '../foods/table.ts'
@@ -29,7 +31,7 @@ const SLOW_MS = 100
  */
 export class Edge {
   state: State
-  readonly knowledge: Knowledge
+  knowledge: Knowledge
   private readonly opened: Opened
   private readonly draw: () => void
   private readonly quit: () => void
@@ -49,17 +51,13 @@ export class Edge {
     this.opened = of.opened
     this.draw = of.draw
     this.quit = of.quit
-    let finder: Finder | undefined
-    this.knowledge = {
-      table: of.table,
-      today: of.today,
-      colour: of.colour,
-      // Made at the first search: the first frame needs none.
-      get finder() {
-        finder ??= createFinder(of.table.foods)
-        return finder
-      },
-    }
+    this.knowledge = knowledgeOf(of.table, of.today, of.colour)
+  }
+
+  /** A food from a packet takes part at once, as a row of the table would. */
+  private learn(own: OwnFood): void {
+    const { table, today, colour } = this.knowledge
+    this.knowledge = knowledgeOf(withOwnFoods(table, [own]).table, today, colour)
   }
 
   /** Events in their order, and one drawing for all of them, so that fast typing is never slower than the screen. */
@@ -104,6 +102,14 @@ export class Edge {
         this.inTurn(async () => {
           const problem = (await this.opened.settings()).write(effect.settings)
           if (problem !== null) this.send({ event: 'said', message: problem })
+        })
+        return
+      case 'own-food':
+        this.learn(effect.own)
+        this.inTurn(async () => {
+          const store = await this.opened.store()
+          const { document } = await store.read()
+          this.tell(await store.setOwnFoods([...document.ownFoods, effect.own]), false)
         })
         return
       case 'change':
@@ -172,5 +178,19 @@ export class Edge {
       }
       clearTimeout(slow)
     }, PAUSE_MS)
+  }
+}
+
+/** The table with its finder, which is made at the first search: the first frame needs none. */
+function knowledgeOf(table: Table, today: string, colour: boolean): Knowledge {
+  let finder: Finder | undefined
+  return {
+    table,
+    today,
+    colour,
+    get finder() {
+      finder ??= createFinder(table.foods)
+      return finder
+    },
   }
 }

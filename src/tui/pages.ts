@@ -26,7 +26,7 @@ export function helpPage({ columns }: State): Page {
     ['!  .', 'use up, hold back (again: no mark);  @ use-by day'],
     ['#  Del', 'take off the shelf;  <  > undo, do again (50 changes)'],
     ['=  /', 'look closer (staves, tiers, sources);  order of the list'],
-    ['paste', 'a whole list, one food a line: 2 cups dry lentils'],
+    ['+  paste', 'a food from a packet;  a whole list, one food a line'],
     'bench: pairings follow every change',
     ['up down 1-5', 'choose a pairing;  Enter takes it;  w why;  c compare'],
     ['t n k', 'protein target, servings, foods at most'],

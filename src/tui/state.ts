@@ -1,4 +1,5 @@
 import type { Food } from '../foods/food.ts'
+import type { OwnFood } from '../foods/own-food.ts'
 import type { Finder } from '../foods/search.ts'
 import type { Table } from '../foods/table.ts'
 import type { Portion } from '../nutrition/protein-source.ts'
@@ -15,12 +16,20 @@ export type ScreenName = (typeof SCREENS)[number]
 export const ORDERS = ['as put', 'use-by', 'protein', 'name'] as const
 export type Order = (typeof ORDERS)[number]
 
+/** What is asked of a food from a packet, in this order. */
+export const OWN_STEPS = ['name', 'protein', 'energy', 'made-of', 'contains'] as const
+export type OwnStep = (typeof OWN_STEPS)[number]
+
+/** What was said of a food from a packet so far, as it was typed. */
+export type OwnDraft = Partial<Record<OwnStep, string>>
+
 /** A line that is being typed, and what it is for. */
 export interface Prompt {
   for:
     | { what: 'amount'; food: string; adds: boolean }
     | { what: 'use-by'; food: string }
     | { what: 'mend'; line: number }
+    | { what: 'own'; step: OwnStep; draft: OwnDraft }
     | {
         what: 'setting'
         setting:
@@ -128,6 +137,7 @@ export type Effect =
   | { effect: 'undo' | 'redo' }
   | { effect: 'serve'; plate: ServedPlate; takes: ShelfChange[]; sample: Shelf | null }
   | { effect: 'settings'; settings: Settings }
+  | { effect: 'own-food'; own: OwnFood }
   | { effect: 'pair'; question: number }
   | { effect: 'quit' }
 

@@ -109,6 +109,54 @@ describe('shelf: letters find, signs act', () => {
   })
 })
 
+describe('a food from a packet', () => {
+  it('is asked for step by step, and kept', () => {
+    const { state, effects } = typed(
+      opened(EMPTY_SHELF),
+      '+',
+      'Galley bar',
+      'enter',
+      '20',
+      'enter',
+      '380',
+      'enter',
+      '80 % pea, 20 % rice',
+      'enter',
+      'peanut',
+      'enter',
+    )
+    expect(state.prompt).toBeNull()
+    expect(effects).toHaveLength(1)
+    expect(effects[0]).toMatchObject({
+      effect: 'own-food',
+      own: {
+        id: 'own-galley-bar',
+        proteinG: 20,
+        perG: 100,
+        kcal: 380,
+        sharesKnown: true,
+        allergens: ['peanut'],
+      },
+    })
+  })
+
+  it.each([
+    [['+', 'Bar', 'enter', '120', 'enter'], '120 g of protein cannot be in 100 g'],
+    [['+', 'Bar', 'enter', 'much', 'enter'], 'Give grams of protein'],
+    [['+', 'Bar', 'enter', '20', 'enter', '380', 'enter', 'kryptonite', 'enter'], 'kryptonite'],
+    [['+', 'Bar', 'enter', '20', 'enter', '5', 'enter', 'soy', 'enter', 'enter'], 'kcal'],
+  ])('is refused with the reason where it cannot be: %j', (keys, reason) => {
+    const { state, effects } = typed(opened(EMPTY_SHELF), ...keys)
+    expect(state.prompt!.problem).toContain(reason)
+    expect(effects).toEqual([])
+  })
+
+  it('foods with an allergen that is left out are marked where they are found', () => {
+    const state = opened(EMPTY_SHELF, { settings: { ...opened().settings, without: ['soy'] } })
+    expect(plain(view(typed(state, 'tofu').state, knowledge))).toMatch(/Tofu, firm +× soy/)
+  })
+})
+
 describe('bench', () => {
   const bench = answered(opened(GALLEY, { screen: 'bench' }))
 

@@ -4,8 +4,8 @@ import { rangesPage } from '../pages.ts'
 import { targetOf } from '../problem-of.ts'
 import { type Knowledge, only, type Prompt, type State, type Updated } from '../state.ts'
 import { changeSettings } from './changes.ts'
+import { openPrompt } from './open-prompt.ts'
 import { withPlate } from './plate-keys.ts'
-import { openPrompt } from './prompt-keys.ts'
 
 /** The bench: every letter acts, nothing is typed but in a line that is opened for it. */
 export function benchKeys(state: State, key: Key, knowledge: Knowledge): Updated {

@@ -4,7 +4,7 @@ import type { ShelfChange } from '../../shelf/changes.ts'
 import type { Key } from '../keys.ts'
 import { type Knowledge, only, type PastedLine, type State, type Updated } from '../state.ts'
 import { changeShelf } from './changes.ts'
-import { openPrompt } from './prompt-keys.ts'
+import { openPrompt } from './open-prompt.ts'
 
 const LINES_AT_MOST = 300
 

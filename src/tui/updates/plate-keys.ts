@@ -7,7 +7,7 @@ import { foodPage } from '../pages.ts'
 import { liftsOf } from '../problem-of.ts'
 import { type Knowledge, only, type State, type Updated } from '../state.ts'
 import { asked } from './changes.ts'
-import { openPrompt } from './prompt-keys.ts'
+import { openPrompt } from './open-prompt.ts'
 
 /** A plate put in place of the last, which can be gone back to. */
 export function withPlate(state: State, plate: readonly Portion<Food>[]): State {

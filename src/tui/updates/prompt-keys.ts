@@ -9,15 +9,9 @@ import { cardPage } from '../pages.ts'
 import { type Knowledge, only, type Prompt, type State, type Updated } from '../state.ts'
 import { grams } from '../text/figures.ts'
 import { changeSettings, changeShelf } from './changes.ts'
+import { ownAnswered } from './own-food-keys.ts'
 import { pastedLine } from './pasted-keys.ts'
 import { withPlate } from './plate-keys.ts'
-
-/** Opens a line to type into. */
-export const openPrompt = (state: State, prompt: Omit<Prompt, 'problem' | 'fresh'>): State => ({
-  ...state,
-  prompt: { ...prompt, fresh: prompt.text !== '', problem: null },
-  message: '',
-})
 
 /** Typing into the open line. The first letter typed replaces a proposed text. */
 export function promptKeys(state: State, key: Key, knowledge: Knowledge): Updated {
@@ -74,6 +68,8 @@ function taken(state: State, prompt: Prompt, knowledge: Knowledge): Updated {
         knowledge,
       )
     }
+    case 'own':
+      return ownAnswered(state, goal.step, goal.draft, text, knowledge)
     case 'mend': {
       const line = pastedLine(text, knowledge)
       const pasted = state.pasted!.map((other, i) => (i === goal.line ? line : other))

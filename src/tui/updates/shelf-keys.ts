@@ -4,8 +4,9 @@ import { foodPage } from '../pages.ts'
 import { rowUnder, shelfRows } from '../rows.ts'
 import { type Knowledge, ORDERS, only, type State, type Updated } from '../state.ts'
 import { asked, changeShelf } from './changes.ts'
+import { openPrompt } from './open-prompt.ts'
+import { askOwn } from './own-food-keys.ts'
 import { pastedLines } from './pasted-keys.ts'
-import { openPrompt } from './prompt-keys.ts'
 
 /**
  * The shelf screen: letters find, signs act. So nobody has to know in which mode a key is typed.
@@ -43,7 +44,7 @@ export function shelfKeys(state: State, key: Key, knowledge: Knowledge): Updated
 }
 
 /** Signs that act. The hyphen and the comma stand in names of foods; digits only begin a find line after letters. */
-const SIGNS = new Set(['!', '.', '#', '=', '/', '<', '>', '@'])
+const SIGNS = new Set(['!', '.', '#', '=', '/', '<', '>', '@', '+'])
 const isSign = (text: string, state: State): boolean =>
   SIGNS.has(text) || (text === '0' && state.sample && state.find === '')
 
@@ -88,6 +89,7 @@ function signed(state: State, sign: string, knowledge: Knowledge): Updated {
     const order = ORDERS[(ORDERS.indexOf(state.order) + 1) % ORDERS.length]!
     return only({ ...state, order, cursor: 0, message: `In order: ${order}.` })
   }
+  if (sign === '+') return only(askOwn(state, 'name', state.find === '' ? {} : { name: state.find }))
   if (sign === '<') return only({ ...state, message: 'Undoing ...' }, { effect: 'undo' })
   if (sign === '>') return only({ ...state, message: 'Doing it again ...' }, { effect: 'redo' })
   if (sign === '0') {

@@ -108,7 +108,10 @@ function rowLine(row: ShelfRow, under: boolean, state: State, knowledge: Knowled
   const food = row.food
   const sketch = food === null || state.spoken ? '' : sketchOf(food, state, knowledge)
   const amount = row.kind === 'here' ? grams(row.item.grams) : ''
-  const mark = row.kind === 'here' ? MARKS[row.item.mark] : ''
+  const avoided = food === null ? [] : food.allergens.filter(id => state.settings.without.includes(id))
+  // What the cook leaves out is never proposed, and is marked wherever it is found.
+  const mark =
+    avoided.length > 0 ? `× ${avoided[0]}`.slice(0, 9) : row.kind === 'here' ? MARKS[row.item.mark] : ''
   const days = row.kind === 'here' ? daysText(row.item.useBy, knowledge.today) : ''
   const protein =
     food === null
