@@ -1,6 +1,7 @@
 const REASONS: Record<string, string> = {
   ENOSPC: 'the disk is full',
   EDQUOT: 'your share of the disk is full',
+  EFBIG: 'the file may not grow so large here',
   EROFS: 'the disk can only be read',
   EACCES: 'no permission',
   EPERM: 'no permission',

@@ -27,6 +27,8 @@ type Reading =
 export class SettingsStore {
   private readonly folder: string | undefined
   private opened: Conf<Record<string, unknown>> | null = null
+  /** what the disk did not take: it holds for the session, and is kept with the next change that it takes */
+  private pending: Partial<Settings> = {}
 
   constructor(folder?: string) {
     this.folder = folder === '' ? undefined : folder
@@ -35,24 +37,26 @@ export class SettingsStore {
   read(): KeptSettings {
     try {
       const reading = this.reading()
-      return { settings: reading.settings, problem: reading.kind === 'sound' ? null : reading.problem }
+      return {
+        settings: { ...reading.settings, ...this.pending },
+        problem: reading.kind === 'sound' ? null : reading.problem,
+      }
     } catch (error) {
       return {
-        settings: DEFAULT_SETTINGS,
+        settings: { ...DEFAULT_SETTINGS, ...this.pending },
         problem: `the settings cannot be read (${reasonOf(error)}); defaults are used`,
       }
     }
   }
 
-  /** Writes them whole; null where that worked, else why not. What another process changes meanwhile is lost: `change` keeps it. */
+  /**
+   * Writes them whole; null where that worked, else why not. What another process changes meanwhile is lost: `change`
+   * keeps it.
+   */
   write(settings: Settings): string | null {
     const parsed = settingsSchema.safeParse(settings)
     if (!parsed.success) return problemOf(parsed.error)
-    try {
-      return this.keep(parsed.data)
-    } catch (error) {
-      return notKept(error)
-    }
+    return this.holding(parsed.data, () => this.keep(parsed.data))
   }
 
   /**
@@ -60,27 +64,41 @@ export class SettingsStore {
    * changed, where a value cannot be.
    */
   async change(changes: Partial<Settings>): Promise<KeptSettings> {
-    const before = this.read().settings
     const parsed = settingsSchema.partial().safeParse(changes)
-    if (!parsed.success) return { settings: before, problem: problemOf(parsed.error) }
-    // The parsed whole has a default for each key that was not given: take only what was.
+    if (!parsed.success) return { settings: this.read().settings, problem: problemOf(parsed.error) }
+    // What is parsed has a default for each key that was not given: take only what was.
     const given = Object.keys(changes) as (keyof Settings)[]
-    const chosen = Object.fromEntries(given.map(key => [key, parsed.data[key]]))
+    const chosen: Partial<Settings> = Object.fromEntries(given.map(key => [key, parsed.data[key]]))
+    let problem: string | null
     try {
       mkdirSync(dirname(this.conf.path), { recursive: true })
-      return await withLock(this.conf.path, stillHeld => {
+      ;({ problem } = await withLock(this.conf.path, stillHeld => {
         if (!stillHeld()) return null
-        const settings = { ...this.read().settings, ...chosen }
-        return { settings, problem: this.keep(settings) }
-      })
+        return { problem: this.holding(chosen, () => this.keep({ ...this.read().settings, ...chosen })) }
+      }))
     } catch (error) {
-      return { settings: { ...before, ...chosen }, problem: notKept(error) }
+      problem = this.holding(chosen, () => {
+        throw error
+      })
     }
+    return { settings: this.read().settings, problem }
   }
 
   /** All settings as they were at first. */
   async reset(): Promise<KeptSettings> {
     return this.change(DEFAULT_SETTINGS)
+  }
+
+  /** Keeps settings, or holds them for the session and says why. */
+  private holding(chosen: Partial<Settings>, keep: () => string | null): string | null {
+    let problem: string | null
+    try {
+      problem = keep()
+    } catch (error) {
+      problem = `the settings cannot be kept (${reasonOf(error)}); they hold until you leave`
+    }
+    this.pending = problem === null ? {} : { ...this.pending, ...chosen }
+    return problem
   }
 
   private keep(settings: Settings): string | null {
@@ -151,6 +169,3 @@ function problemOf(error: z.ZodError): string {
   const [issue] = error.issues
   return `this setting cannot be: ${issue?.path.join('.')}: ${issue?.message}`
 }
-
-const notKept = (error: unknown): string =>
-  `the settings cannot be kept (${reasonOf(error)}); they hold until you leave`

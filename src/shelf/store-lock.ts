@@ -1,12 +1,12 @@
 import fs from 'node:fs'
-import { resolve } from 'node:path'
+import { dirname, resolve } from 'node:path'
 import { setTimeout as wait } from 'node:timers/promises'
 import lockfile from 'proper-lockfile'
 
 /** A lock older than this belongs to a process that is gone. */
 const STALE_MS = 2_500
 /** Longer than it takes for a lock to go stale, so that a killed process never turns others away. */
-const PATIENCE_MS = 8_000
+const PATIENCE_MS = 6_000
 /** A holder works for milliseconds; one that was stopped for this long while locking starts again. */
 const LOCKING_AT_MOST_MS = 1_000
 
@@ -40,7 +40,7 @@ const guarded = {
   ...fs,
   mkdir(path: string, done: (error: NodeJS.ErrnoException | null) => void): void {
     fs.mkdir(path, error => {
-      if (error === null) madeAt.set(path, performance.now())
+      if (error === null) madeAt.set(path, Date.now())
       done(error)
     })
   },
@@ -83,7 +83,8 @@ export async function withLock<T extends object>(
   for (let turn = 0; turn < TURNS_AT_MOST; turn++) {
     const release = await locked(path, lockPath)
     held.set(lockPath, identity(lockPath) ?? 'gone')
-    const inTime = performance.now() - (madeAt.get(lockPath) ?? 0) < LOCKING_AT_MOST_MS
+    // The wall clock, because the other one stands still while the machine sleeps.
+    const inTime = Math.abs(Date.now() - (madeAt.get(lockPath) ?? 0)) < LOCKING_AT_MOST_MS
     try {
       const result = work(() => inTime && identity(lockPath) === held.get(lockPath))
       if (result !== null) return result
@@ -96,17 +97,23 @@ export async function withLock<T extends object>(
 }
 
 async function locked(path: string, lockPath: string): Promise<() => Promise<void>> {
-  const begun = performance.now()
+  let waitedMs = 0
   for (;;) {
+    const begun = performance.now()
     try {
       return await lockfile.lock(path, OPTIONS)
     } catch (error) {
-      if ((error as NodeJS.ErrnoException).code !== 'ELOCKED') throw error
-      if (performance.now() - begun > PATIENCE_MS) {
+      // A process that was stopped while locking finds that its lock is gone, and starts again.
+      const { code } = error as NodeJS.ErrnoException
+      const again = code === 'ELOCKED' || (code === 'ENOENT' && fs.existsSync(dirname(lockPath)))
+      if (!again) throw error
+      if (waitedMs > PATIENCE_MS) {
         if (!fromTheFuture(lockPath)) throw error
         fs.rmdirSync(lockPath)
       }
       await wait(1 + Math.random() * 6)
+      // Time in which this process itself was stopped is no waiting.
+      waitedMs += Math.min(performance.now() - begun, 100)
     }
   }
 }

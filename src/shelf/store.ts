@@ -213,6 +213,8 @@ export class ShelfStore {
       try {
         const reading = readDocument(text() ?? '')
         if (reading.ok) return reading.document
+        // What an older program left beside a newer one's shelf is not what is on hand.
+        if (reading.newer) break
       } catch {}
     }
     return NEW_DOCUMENT
