@@ -308,6 +308,6 @@ describe('the sample shelf', () => {
     expect({ problems, told }).toEqual({ problems: [], told: [] })
     expect(shelf.items.length).toBeGreaterThanOrEqual(20)
     expect(shelf.items.every(({ useBy }) => useBy === null)).toBe(true)
-    expect(new Set(shelf.items.map(({ mark }) => mark))).toEqual(new Set(['', 'use-up', 'hold-back']))
+    expect(new Set(shelf.items.map(({ mark }) => mark))).toEqual(new Set(['', 'hold-back']))
   })
 })
