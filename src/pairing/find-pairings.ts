@@ -12,6 +12,8 @@ import { whyOf } from './reasons.ts'
 import { better, type Proposal, Search } from './search.ts'
 import { thriftyGrams } from './thrift.ts'
 
+/** Further pairings may score so much less than the best (a fraction of DIAAS). */
+const SLACK = 0.12
 /** Protein may be over its target by this share. */
 const WINDOW_SHARE = 0.05
 
@@ -54,8 +56,10 @@ export function bestProposals(problem: PairingProblem, admitted: Admitted, windo
   const { forced, open } = admitted
   const space = { forced, open, foodsAtMost: problem.foodsAtMost, window }
   const forcedKins = new Set(forced.map(({ food }) => food.kin))
-  // A few more than are asked for, so that different ones are among them.
-  const found = new Search(space, 4 * problem.pairings).run()
+  // Where several are asked for, more than those are met, so that different ones are among them.
+  const aim =
+    problem.pairings === 1 ? { enough: 1, slack: 0 } : { enough: 5 * problem.pairings, slack: SLACK }
+  const found = new Search(space, aim).run()
   return differentProposals(found, problem.pairings, forcedKins)
 }
 

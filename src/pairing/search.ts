@@ -1,3 +1,4 @@
+import { STAVES } from '../nutrition/amino-acids.ts'
 import type { Candidate } from './candidate.ts'
 import { bestGrams, type Window } from './grams.ts'
 
@@ -15,10 +16,11 @@ export interface Proposal {
 
 /** At most so many foods of one role stand in a pairing. */
 const ONE_ROLE_AT_MOST = 2
-/** Sets of each size that are grown further, and that are mended by swaps. */
-const GROWN = 36
-const MENDED = 8
-const ROUNDS_OF_SWAPS = 6
+/** Sets of each size that are grown further, sets that reach too little protein yet, and sets that are mended by swaps. */
+const GROWN = 16
+const GROWN_TOWARDS_PROTEIN = 12
+const MENDED = 6
+const ROUNDS_OF_SWAPS = 5
 /** Scores nearer than this are one score (DIAAS as a fraction). */
 const SAME = 1e-7
 
@@ -28,6 +30,12 @@ export interface SearchSpace {
   open: readonly Candidate[]
   foodsAtMost: number
   window: Window
+}
+
+/** How far to search: `enough` proposals that reach 100 end it; proposals within `slack` of the best are wanted too. */
+export interface SearchAim {
+  enough: number
+  slack: number
 }
 
 /** Is one proposal better than another? By truncated DIAAS, then fewer foods, then less energy. */
@@ -43,127 +51,187 @@ const comparator = (a: Proposal, b: Proposal): number => (better(a, b) ? -1 : be
 
 /**
  * Proposals for a space, the best first: greedy construction from every single food and every pair, growing the best
- * sets by each food that is left, then local search by swaps until none helps. Each set gets its exact grams.
+ * sets (and those that lack only protein) by each food that is left, then local search by swaps until none helps. A set
+ * whose foods could not reach what is known already, however they are weighed, is not weighed at all.
  */
 export class Search {
-  private readonly found = new Map<string, Proposal | null>()
   private readonly space: SearchSpace
-  /** the search ends early once so many proposals reach 100 with the foods they have */
-  private readonly enough: number
+  private readonly aim: SearchAim
+  /** what is known of each set that was looked at, by its key; null: no grams, or not worth weighing */
+  private readonly seen = new Map<string, Proposal | null>()
+  private readonly proposals: Proposal[] = []
+  private readonly place = new Map<Candidate, number>()
+  /** per food: each stave of its own, as a fraction of the pattern */
+  private readonly own: Float64Array[]
+  private readonly forcedBound: Float64Array
+  private best = 0
+  private reached = 0
 
-  constructor(space: SearchSpace, enough: number) {
+  constructor(space: SearchSpace, aim: SearchAim) {
     this.space = space
-    this.enough = enough
+    this.aim = aim
+    space.open.forEach((food, i) => {
+      this.place.set(food, i)
+    })
+    this.own = space.open.map(ownStaves)
+    this.forcedBound = new Float64Array(STAVES.length)
+    for (const food of space.forced) raise(this.forcedBound, ownStaves(food))
   }
 
   /** Every feasible proposal met, the best first. */
   run(): Proposal[] {
     const { forced, open, foodsAtMost } = this.space
     const free = foodsAtMost - forced.filter(({ takesPlace }) => takesPlace).length
-    let level: Proposal[] = []
-    const empty = forced.length > 0 ? this.propose([]) : null
-    if (empty !== null) level = [empty]
-    let seeds: readonly (readonly Candidate[])[] = [[]]
-    for (let size = 1; size <= free; size++) {
-      level = this.grow(seeds, open, size)
-      if (this.complete()) break
+    if (forced.length > 0) this.weigh([])
+    let seeds: number[][] = [[]]
+    for (let size = 1; size <= free && !this.complete(); size++) {
+      const lacking: number[][] = []
+      for (const set of this.grown(seeds)) {
+        if (this.weigh(set) === null) lacking.push(set)
+      }
       // Pairs are grown from every single food, reachable or not: two that fail alone may do together.
-      seeds = size === 1 ? open.map(food => [food]) : this.seedsFrom(level)
+      seeds =
+        size === 1 ? open.map((_, i) => [i]) : [...this.bestSeeds(size), ...this.towardsProtein(lacking)]
     }
     if (!this.complete()) this.mend()
-    return this.proposals()
-  }
-
-  private proposals(): Proposal[] {
-    return [...this.found.values()].filter(proposal => proposal !== null).sort(comparator)
+    return this.proposals.sort(comparator)
   }
 
   /** Do enough different sets reach 100 already? More foods could not better them. */
   private complete(): boolean {
-    let reached = 0
-    for (const proposal of this.found.values()) if (proposal !== null && proposal.quality >= 1) reached++
-    return reached >= this.enough
+    return this.reached >= this.aim.enough
   }
 
-  private grow(
-    seeds: readonly (readonly Candidate[])[],
-    open: readonly Candidate[],
-    size: number,
-  ): Proposal[] {
-    const grown: Proposal[] = []
+  /** Each seed with each food that is left, once, those with the highest bound first. */
+  private grown(seeds: readonly number[][]): number[][] {
+    const sets: { set: number[]; bound: number }[] = []
+    const met = new Set<string>()
     for (const seed of seeds) {
-      for (const food of open) {
-        if (size > 1 && seed.includes(food)) continue
-        const proposal = this.propose([...seed, food])
-        if (proposal !== null) grown.push(proposal)
+      const bound = this.boundOf(seed)
+      for (let food = 0; food < this.own.length; food++) {
+        if (seed.includes(food)) continue
+        const set = [...seed, food].sort((a, b) => a - b)
+        const key = set.join()
+        if (met.has(key) || !this.fits(set)) continue
+        met.add(key)
+        sets.push({ set, bound: leastOf(bound, this.own[food]!) })
       }
     }
-    return grown
+    return sets.sort((a, b) => b.bound - a.bound).map(({ set }) => set)
   }
 
-  /** The best sets of a level and, so that no short stave is forgotten, the best for each food. */
-  private seedsFrom(level: readonly Proposal[]): (readonly Candidate[])[] {
-    const sorted = [...new Set(level)].sort(comparator)
-    const seeds = new Set(sorted.slice(0, GROWN))
-    const seen = new Map<Candidate, number>()
-    for (const proposal of sorted) {
-      for (const food of proposal.set) {
-        const times = seen.get(food) ?? 0
-        if (times < 1) seeds.add(proposal)
-        seen.set(food, times + 1)
-      }
+  /** The best sets of a size and, so that no short stave is forgotten, the best for each food. */
+  private bestSeeds(size: number): number[][] {
+    const ofSize = this.proposals
+      .filter(({ set }) => set.length === size + this.space.forced.length)
+      .sort(comparator)
+    const seeds = new Set(ofSize.slice(0, GROWN))
+    const met = new Set<Candidate>()
+    for (const proposal of ofSize) {
+      if (proposal.set.some(food => !met.has(food))) seeds.add(proposal)
+      for (const food of proposal.set) met.add(food)
     }
-    return [...seeds].map(({ set }) => set.filter(food => !food.useUp))
+    return [...seeds].map(proposal => this.chosenOf(proposal))
   }
 
-  /** Local search: swaps of one food, additions and removals on the best sets, until none of them helps. */
+  /** Of the sets without feasible grams, those that can bring most protein: another food may make them reach it. */
+  private towardsProtein(lacking: readonly number[][]): number[][] {
+    const reach = (set: readonly number[]) =>
+      set.reduce((sum, i) => sum + this.space.open[i]!.protein * this.space.open[i]!.mostG, 0)
+    return lacking
+      .filter(set => reach(set) < this.space.window.leastProteinG)
+      .sort((a, b) => reach(b) - reach(a))
+      .slice(0, GROWN_TOWARDS_PROTEIN)
+  }
+
+  /** Local search: swaps, additions and removals of one food on the best sets, until none of them helps. */
   private mend(): void {
+    const mended = new Set<Proposal>()
     for (let round = 0; round < ROUNDS_OF_SWAPS; round++) {
-      const before = this.found.size
-      for (const { set } of this.proposals().slice(0, MENDED)) {
-        const chosen = set.filter(food => !food.useUp)
-        for (let out = 0; out < chosen.length; out++) {
-          const rest = chosen.filter((_, i) => i !== out)
-          this.propose(rest)
-          for (const food of this.space.open) if (!chosen.includes(food)) this.propose([...rest, food])
-        }
-        for (const food of this.space.open) if (!chosen.includes(food)) this.propose([...chosen, food])
+      const next = [...this.proposals]
+        .sort(comparator)
+        .slice(0, MENDED)
+        .filter(proposal => !mended.has(proposal))
+      if (next.length === 0) return
+      for (const proposal of next) {
+        mended.add(proposal)
+        const chosen = this.chosenOf(proposal)
+        const rests = chosen.map(out => chosen.filter(i => i !== out))
+        for (const rest of rests) if (rest.length > 0 && this.fits(rest)) this.weigh(rest)
+        for (const set of this.grown([...rests, chosen])) this.weigh(set)
       }
-      if (this.found.size === before) return
     }
   }
 
-  /** The exact grams of the forced foods and some chosen ones; null where roles, kin, places or window forbid the set. */
-  private propose(chosen: readonly Candidate[]): Proposal | null {
-    const set = [...this.space.forced, ...chosen]
-    if (set.length === 0) return null
-    const key = set
-      .map(({ food }) => food.id)
-      .sort()
-      .join('|')
-    const known = this.found.get(key)
+  private chosenOf(proposal: Proposal): number[] {
+    return proposal.set.flatMap(food => this.place.get(food) ?? []).sort((a, b) => a - b)
+  }
+
+  /** The exact grams of the forced foods and some chosen ones; null where none keep to the window, or none could help. */
+  private weigh(chosen: readonly number[]): Proposal | null {
+    const key = chosen.join()
+    const known = this.seen.get(key)
     if (known !== undefined) return known
-    const proposal = this.fits(set) ? proposalOf(set, this.space.window) : null
-    this.found.set(key, proposal)
+    const wanted = this.best - this.aim.slack
+    const hopeless = leastOf(this.boundOf(chosen), null) < wanted - SAME
+    const set = [...this.space.forced, ...chosen.map(i => this.space.open[i]!)]
+    const proposal = hopeless ? null : proposalOf(set, this.space.window)
+    this.seen.set(key, proposal)
+    if (proposal !== null) {
+      this.proposals.push(proposal)
+      this.best = Math.max(this.best, Math.min(1, proposal.quality))
+      if (proposal.quality >= 1) this.reached++
+    }
     return proposal
   }
 
-  private fits(set: readonly Candidate[]): boolean {
+  /** The most that each stave of a set could be, whatever the grams: that of its food with most of it. */
+  private boundOf(chosen: readonly number[]): Float64Array {
+    const bound = Float64Array.from(this.forcedBound)
+    for (const i of chosen) raise(bound, this.own[i]!)
+    return bound
+  }
+
+  /** Do roles, kin and places allow the set? */
+  private fits(chosen: readonly number[]): boolean {
+    const { forced, open, foodsAtMost } = this.space
     let places = 0
-    for (let i = 0; i < set.length; i++) {
-      const { food, takesPlace, useUp } = set[i]!
+    for (const food of forced) if (food.takesPlace) places++
+    for (let i = 0; i < chosen.length; i++) {
+      const { food, takesPlace } = open[chosen[i]!]!
       if (takesPlace) places++
       let sameRole = 1
-      for (let j = 0; j < i; j++) {
-        const other = set[j]!.food
+      for (const { food: other, takesPlace: counts } of forced) {
         if (other.kin === food.kin) return false
-        if (other.role === food.role && set[j]!.takesPlace) sameRole++
+        // What the cook wants used up may be more of one role than is proposed otherwise.
+        if (other.role === food.role && counts) sameRole++
       }
-      // What the cook wants used up may be more of one role than is proposed otherwise.
-      if (takesPlace && !useUp && sameRole > ONE_ROLE_AT_MOST) return false
+      for (let j = 0; j < i; j++) {
+        const { food: other, takesPlace: counts } = open[chosen[j]!]!
+        if (other.kin === food.kin) return false
+        if (other.role === food.role && counts) sameRole++
+      }
+      if (takesPlace && sameRole > ONE_ROLE_AT_MOST) return false
     }
-    return places <= this.space.foodsAtMost
+    return places <= foodsAtMost
   }
+}
+
+const ownStaves = ({ staves, crude }: Candidate): Float64Array =>
+  staves.map(stave => (crude > 0 ? stave / crude : 0))
+
+function raise(bound: Float64Array, own: Float64Array): void {
+  for (let i = 0; i < bound.length; i++) if (own[i]! > bound[i]!) bound[i] = own[i]!
+}
+
+/** The shortest stave of a bound, raised by one more food. */
+function leastOf(bound: Float64Array, own: Float64Array | null): number {
+  let least = Number.POSITIVE_INFINITY
+  for (let i = 0; i < bound.length; i++) {
+    const stave = own === null ? bound[i]! : Math.max(bound[i]!, own[i]!)
+    if (stave < least) least = stave
+  }
+  return least
 }
 
 /** A set with its exact best grams; null where none keep to the window. */

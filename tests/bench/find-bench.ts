@@ -15,7 +15,7 @@ export function findBench(table: Table): string[] {
     )
     finder.find('warm up')
     const times: number[] = []
-    for (const { query } of QUERIES) {
+    for (const [query] of QUERIES) {
       for (let length = 1; length <= query.length; length++) {
         const start = performance.now()
         finder.find(query.slice(0, length), { limit: 20 })

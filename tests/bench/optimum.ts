@@ -49,23 +49,42 @@ function programmeOf(
   const lines: string[] = ['Maximize', ' obj: q', 'Subject To']
   lines.push(` scale: ${terms(foods.map((food, j) => [food.crude, `y${j}`]))} = 1`)
   STAVES.forEach((stave, i) => {
-    lines.push(` ${stave}: ${terms([[-1, 'q'], ...foods.map((food, j): [number, string] => [food.staves[i]!, `y${j}`])])} >= 0`)
+    lines.push(
+      ` ${stave}: ${terms([[-1, 'q'], ...foods.map((food, j): [number, string] => [food.staves[i]!, `y${j}`])])} >= 0`,
+    )
   })
   const protein = foods.map((food, j): [number, string] => [food.protein, `y${j}`])
   lines.push(` low: ${terms([...protein, [-window.leastProteinG, 't']])} >= 0`)
   lines.push(` high: ${terms([...protein, [-window.mostProteinG, 't']])} <= 0`)
   foods.forEach((food, j) => {
-    lines.push(` up${j}: ${terms([[1, `y${j}`], [-food.mostG, 't']])} <= 0`)
-    lines.push(` on${j}: ${terms([[1, `y${j}`], [-food.mostG * T, `z${j}`]])} <= 0`)
-    lines.push(` least${j}: ${terms([[1, `y${j}`], [-food.leastG, 't'], [-food.leastG * T, `z${j}`]])} >= -${(food.leastG * T).toPrecision(15)}`)
+    lines.push(
+      ` up${j}: ${terms([
+        [1, `y${j}`],
+        [-food.mostG, 't'],
+      ])} <= 0`,
+    )
+    lines.push(
+      ` on${j}: ${terms([
+        [1, `y${j}`],
+        [-food.mostG * T, `z${j}`],
+      ])} <= 0`,
+    )
+    lines.push(
+      ` least${j}: ${terms([
+        [1, `y${j}`],
+        [-food.leastG, 't'],
+        [-food.leastG * T, `z${j}`],
+      ])} >= -${(food.leastG * T).toPrecision(15)}`,
+    )
   })
   lines.push(` places: ${terms(foods.map((_, j) => [1, `z${j}`]))} <= ${problem.foodsAtMost}`)
   const group = (key: (food: Candidate) => string, most: number, label: string) => {
     const groups = new Map<string, number[]>()
-    foods.forEach((food, j) => groups.set(key(food), [...(groups.get(key(food)) ?? []), j]))
+    for (const [j, food] of foods.entries()) groups.set(key(food), [...(groups.get(key(food)) ?? []), j])
     let number = 0
     for (const members of groups.values()) {
-      if (members.length > most) lines.push(` ${label}${number++}: ${terms(members.map(j => [1, `z${j}`]))} <= ${most}`)
+      if (members.length > most)
+        lines.push(` ${label}${number++}: ${terms(members.map(j => [1, `z${j}`]))} <= ${most}`)
     }
   }
   group(({ food }) => food.role, 2, 'role')

@@ -4,14 +4,36 @@ import type { Table } from '../../src/foods/table.ts'
 import { seededUniform } from '../../src/nutrition/random.ts'
 import type { PairingProblem, ShelfFood } from '../../src/pairing/problem.ts'
 
+const isPaired = (food: Food): boolean => food.place === 'protein' && food.origin === 'plant'
+
 /** A random pairing problem: a shelf of `size` foods that may be paired, some of them scarce, and a target. */
-export function randomProblem(
+export const randomProblem = (
+  table: Table,
+  uniform: () => number,
+  size: number,
+  foodsAtMost: number,
+): PairingProblem => problemFrom(table, table.foods.filter(isPaired), uniform, size, foodsAtMost)
+
+/** One of the kind that seldom reaches 100: grains, nuts and roots, with few pulses and no soy or powders. */
+export function hardProblem(
   table: Table,
   uniform: () => number,
   size: number,
   foodsAtMost: number,
 ): PairingProblem {
-  const pool = table.foods.filter(food => food.place === 'protein' && food.origin === 'plant')
+  const paired = table.foods.filter(isPaired)
+  const poor = paired.filter(({ role }) => ['grain', 'nut-seed', 'root'].includes(role))
+  const rich = paired.filter(({ role }) => role === 'pulse')
+  return problemFrom(table, [...poor, ...sample(rich, 3, uniform)], uniform, size, foodsAtMost)
+}
+
+function problemFrom(
+  table: Table,
+  pool: readonly Food[],
+  uniform: () => number,
+  size: number,
+  foodsAtMost: number,
+): PairingProblem {
   const shelf = sample(pool, size, uniform).map(
     (food): ShelfFood => ({
       food,
@@ -43,5 +65,8 @@ export function randomProblems(table: Table, count: number, seed: number): Pairi
 
 function sample(pool: readonly Food[], size: number, uniform: () => number): Food[] {
   const rest = [...pool]
-  return Array.from({ length: Math.min(size, rest.length) }, () => rest.splice(Math.floor(rest.length * uniform()), 1)[0]!)
+  return Array.from(
+    { length: Math.min(size, rest.length) },
+    () => rest.splice(Math.floor(rest.length * uniform()), 1)[0]!,
+  )
 }
