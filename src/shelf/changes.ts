@@ -1,9 +1,9 @@
-import { z } from 'zod'
+import * as z from 'zod/mini'
 import {
   daySchema,
   GRAMS_AT_MOST,
   gramsSchema,
-  MARKS,
+  markSchema,
   noteSchema,
   type Shelf,
   type ShelfItem,
@@ -12,9 +12,9 @@ import {
 
 const food = shelfItemSchema.shape.food
 const extras = {
-  mark: z.enum(MARKS).optional(),
-  useBy: daySchema.nullable().optional(),
-  note: noteSchema.optional(),
+  mark: z.optional(markSchema),
+  useBy: z.optional(z.nullable(daySchema)),
+  note: z.optional(noteSchema),
 }
 
 /**
@@ -23,10 +23,10 @@ const extras = {
  */
 export const shelfChangeSchema = z.discriminatedUnion('do', [
   z.object({ do: z.literal('add'), food, grams: gramsSchema, ...extras }),
-  z.object({ do: z.literal('set'), food, grams: gramsSchema.optional(), ...extras }),
+  z.object({ do: z.literal('set'), food, grams: z.optional(gramsSchema), ...extras }),
   z.object({ do: z.literal('take'), food, grams: gramsSchema }),
   z.object({ do: z.literal('remove'), food }),
-  z.object({ do: z.literal('mark'), food, mark: z.enum(MARKS) }),
+  z.object({ do: z.literal('mark'), food, mark: markSchema }),
   z.object({ do: z.literal('clear') }),
 ])
 export type ShelfChange = z.infer<typeof shelfChangeSchema>
@@ -103,7 +103,7 @@ const without = (shelf: Shelf, at: number): Changed => ({
   shelf: { items: shelf.items.filter((_, i) => i !== at) },
 })
 
-function problemOf(error: z.ZodError): string {
+function problemOf(error: z.core.$ZodError): string {
   const [issue] = error.issues
   return `this change cannot be: ${issue?.path.join('.') || 'it'}: ${issue?.message ?? 'malformed'}`
 }

@@ -1,4 +1,4 @@
-import { z } from 'zod'
+import * as z from 'zod/mini'
 import { historySchema, NO_HISTORY, remember } from './history.ts'
 import { type ServedPlate, servedPlateSchema, withPlate } from './served-plate.ts'
 import { EMPTY_SHELF, type Shelf, shelfSchema } from './shelf.ts'

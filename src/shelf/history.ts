@@ -1,4 +1,4 @@
-import { z } from 'zod'
+import * as z from 'zod/mini'
 import { type ServedPlate, servedPlateSchema } from './served-plate.ts'
 import { type Shelf, shelfItemSchema } from './shelf.ts'
 
@@ -7,8 +7,8 @@ export const REMEMBERED_CHANGES = 50
 
 const placeSchema = z.object({
   food: z.string(),
-  at: z.number().int().nonnegative(),
-  item: shelfItemSchema.nullable(),
+  at: z.int().check(z.nonnegative()),
+  item: z.nullable(shelfItemSchema),
 })
 type Place = z.infer<typeof placeSchema>
 
@@ -18,7 +18,7 @@ export const stepSchema = z.object({
   before: z.array(placeSchema),
   after: z.array(placeSchema),
   /** the plate that was served with this step: it comes and goes with it */
-  plate: servedPlateSchema.optional(),
+  plate: z.optional(servedPlateSchema),
 })
 export type Step = z.infer<typeof stepSchema>
 

@@ -1,11 +1,11 @@
-import { z } from 'zod'
+import * as z from 'zod/mini'
 import { daySchema } from './shelf.ts'
 
 /** A plate that was served: the day, and grams a serving by food. */
 export const servedPlateSchema = z.object({
   day: daySchema,
-  servings: z.number().int().positive(),
-  portions: z.array(z.object({ food: z.string(), grams: z.number().positive() })),
+  servings: z.int().check(z.positive()),
+  portions: z.array(z.object({ food: z.string(), grams: z.number().check(z.positive()) })),
 })
 export type ServedPlate = z.infer<typeof servedPlateSchema>
 

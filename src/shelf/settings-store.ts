@@ -1,7 +1,7 @@
 import { existsSync, mkdirSync, renameSync } from 'node:fs'
 import { dirname, join } from 'node:path'
 import Conf from 'conf'
-import type { z } from 'zod'
+import * as z from 'zod/mini'
 import { DEFAULT_SETTINGS } from './default-settings.ts'
 import { reasonOf } from './reasons.ts'
 import { type Settings, settingsSchema } from './settings.ts'
@@ -64,7 +64,7 @@ export class SettingsStore {
    * changed, where a value cannot be.
    */
   async change(changes: Partial<Settings>): Promise<KeptSettings> {
-    const parsed = settingsSchema.partial().safeParse(changes)
+    const parsed = z.partial(settingsSchema).safeParse(changes)
     if (!parsed.success) return { settings: this.read().settings, problem: problemOf(parsed.error) }
     // What is parsed has a default for each key that was not given: take only what was.
     const given = Object.keys(changes) as (keyof Settings)[]
@@ -165,7 +165,7 @@ export class SettingsStore {
   }
 }
 
-function problemOf(error: z.ZodError): string {
+function problemOf(error: z.core.$ZodError): string {
   const [issue] = error.issues
   return `this setting cannot be: ${issue?.path.join('.')}: ${issue?.message}`
 }

@@ -1,6 +1,7 @@
 import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync } from 'node:fs'
 import { basename, dirname, join } from 'node:path'
 import Conf from 'conf'
+import * as z from 'zod/mini'
 import { applyChanges, type ShelfChange } from './changes.ts'
 import { type KeptDocument, NEW_DOCUMENT, readDocument, withShelf } from './document.ts'
 import { redo, undo } from './history.ts'
@@ -141,7 +142,7 @@ export class ShelfStore {
   async setPlates(plates: (kept: readonly ServedPlate[]) => readonly ServedPlate[]): Promise<Kept> {
     return this.inTurn(() =>
       this.commit(document => {
-        const parsed = servedPlateSchema.array().safeParse([...plates(document.plates)])
+        const parsed = z.array(servedPlateSchema).safeParse([...plates(document.plates)])
         if (!parsed.success)
           return refused(document, `this plate cannot be kept: ${parsed.error.issues[0]?.message}`)
         return did({ ...document, plates: parsed.data })

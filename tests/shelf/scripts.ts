@@ -1,12 +1,16 @@
 import { type ChildProcessByStdio, spawn } from 'node:child_process'
-import { mkdtempSync } from 'node:fs'
+import { mkdtempSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import type { Readable } from 'node:stream'
 import { build } from 'esbuild'
+import { afterAll } from 'vitest'
+
+const root = mkdtempSync(join(tmpdir(), 'shelf-test-'))
+afterAll(() => rmSync(root, { recursive: true, force: true }))
 
 /** A folder of its own for one test. */
-export const freshFolder = (): string => mkdtempSync(join(tmpdir(), 'shelf-test-'))
+export const freshFolder = (): string => mkdtempSync(join(root, 'home-'))
 
 /** Bundles a script that stands beside this file, so that a hundred processes of it start fast. Returns its path. */
 export async function bundled(name: string): Promise<string> {
