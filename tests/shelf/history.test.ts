@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { applyChange } from '../../src/shelf/changes.ts'
 import { NO_HISTORY, REMEMBERED_CHANGES, redo, remember, undo } from '../../src/shelf/history.ts'
 import { EMPTY_SHELF, type Shelf } from '../../src/shelf/shelf.ts'
-import { change, shelf } from './shelves.ts'
+import { change, foods, shelf } from './shelves.ts'
 
 describe('undo and redo', () => {
   it('go back and forth through exactly the shelves that were, with the order of their foods', () => {
@@ -32,6 +32,18 @@ describe('undo and redo', () => {
           expect(now).toEqual(shelves[at])
         }
         expect(redo(history, now)).toBeNull()
+      }),
+    )
+  })
+
+  it('bring back the order of foods that only changed their places', () => {
+    const item = (food: string) => ({ food, grams: 5, mark: '' as const, useBy: null, note: '' })
+    fc.assert(
+      fc.property(fc.shuffledSubarray([...foods]), fc.shuffledSubarray([...foods]), (a, b) => {
+        const [from, to] = [{ items: a.map(item) }, { items: b.map(item) }]
+        const undone = undo(remember(NO_HISTORY, 'import', from, to), to)!
+        expect(undone.shelf).toEqual(from)
+        expect(redo(undone.history, undone.shelf)?.shelf).toEqual(to)
       }),
     )
   })

@@ -4,6 +4,7 @@ import {
   mkdirSync,
   readdirSync,
   readFileSync,
+  rmdirSync,
   rmSync,
   statSync,
   symlinkSync,
@@ -11,11 +12,13 @@ import {
   writeFileSync,
 } from 'node:fs'
 import { join } from 'node:path'
+import { setTimeout as wait } from 'node:timers/promises'
 import { describe, expect, it } from 'vitest'
 import type { ShelfChange } from '../../src/shelf/changes.ts'
 import { NEW_DOCUMENT } from '../../src/shelf/document.ts'
 import type { ServedPlate } from '../../src/shelf/served-plate.ts'
 import { ShelfStore } from '../../src/shelf/store.ts'
+import { withLock } from '../../src/shelf/store-lock.ts'
 import { bundled, freshFolder, Running } from './scripts.ts'
 
 const add = (food: string, grams: number): ShelfChange => ({ do: 'add', food, grams })
@@ -63,13 +66,22 @@ describe('the store', () => {
     expect(gramsOf(await new ShelfStore(folder).read())).toEqual({ tahini: 450 })
   })
 
-  it('keeps calls in their order, whoever awaits them', async () => {
-    const store = new ShelfStore(freshFolder())
+  it('keeps calls in their order, whoever awaits them, however long they wait for another process', async () => {
+    const folder = freshFolder()
+    const store = new ShelfStore(folder)
     const calls = [store.change([add('tahini', 100)], 'add')]
+    await calls[0]
+    const lock = join(folder, 'shelf.json.lock')
+    mkdirSync(lock)
     for (let n = 1; n <= 30; n++)
       calls.push(store.change([{ do: 'set', food: 'tahini', grams: n }], `set ${n}`))
-    const seen = (await Promise.all(calls)).map(kept => gramsOf(kept).tahini)
-    expect(seen).toEqual([100, ...Array.from({ length: 30 }, (_, i) => i + 1)])
+    await wait(100)
+    rmdirSync(lock)
+    await Promise.all(calls)
+    const { document } = await new ShelfStore(folder).read()
+    const inOrder = Array.from({ length: 30 }, (_, i) => `set ${i + 1}`)
+    expect(document.history.undo.map(({ label }) => label)).toEqual(['add', ...inOrder])
+    expect(gramsOf({ document })).toEqual({ tahini: 30 })
   })
 
   it('undoes and redoes across restarts, fifty changes back', async () => {
@@ -362,4 +374,25 @@ describe('a lock', () => {
     const kept = await new ShelfStore(folder).change([add('tahini', 1)], 'add')
     expect([kept.saved, gramsOf(kept)]).toEqual([true, { tahini: 451 }])
   }, 60_000)
+
+  it('that another process took over meanwhile is known to be lost, and left to it', async () => {
+    const folder = freshFolder()
+    const lock = join(folder, 'x.lock')
+    const turns: boolean[] = []
+    const done = withLock(join(folder, 'x'), stillHeld => {
+      const first = turns.length === 0
+      if (first) {
+        expect(stillHeld()).toBe(true)
+        rmdirSync(lock)
+        mkdirSync(lock)
+      }
+      turns.push(stillHeld())
+      return first ? null : { done: true }
+    })
+    await wait(500)
+    expect([existsSync(lock), turns]).toEqual([true, [false]])
+    rmdirSync(lock)
+    expect(await done).toEqual({ done: true })
+    expect([existsSync(lock), turns]).toEqual([false, [false, true]])
+  })
 })
