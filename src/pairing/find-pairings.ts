@@ -14,6 +14,8 @@ import { thriftyGrams } from './thrift.ts'
 
 /** Further pairings may score so much less than the best (a fraction of DIAAS). */
 const SLACK = 0.12
+/** Where one is asked for, sets so near the best (a fraction) are still worth growing. */
+const NEAR = 0.06
 /** Protein may be over its target by this share. */
 const WINDOW_SHARE = 0.05
 
@@ -58,7 +60,7 @@ export function bestProposals(problem: PairingProblem, admitted: Admitted, windo
   const forcedKins = new Set(forced.map(({ food }) => food.kin))
   // Where several are asked for, more than those are met, so that different ones are among them.
   const aim =
-    problem.pairings === 1 ? { enough: 1, slack: 0 } : { enough: 5 * problem.pairings, slack: SLACK }
+    problem.pairings === 1 ? { enough: 1, slack: NEAR } : { enough: 5 * problem.pairings, slack: SLACK }
   const found = new Search(space, aim).run()
   return differentProposals(found, problem.pairings, forcedKins)
 }

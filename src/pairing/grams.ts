@@ -1,6 +1,6 @@
 import { STAVES } from '../nutrition/amino-acids.ts'
 import type { Candidate } from './candidate.ts'
-import { emptyTableau, optimise, pivot } from './simplex.ts'
+import { borrowedTableau, optimise, pivot } from './simplex.ts'
 
 /** What the grams of a serving must keep to; null: no ceiling. */
 export interface Window {
@@ -18,7 +18,8 @@ export interface BestGrams {
 
 /**
  * The exact inner step: the grams of a chosen set that make its least stave greatest, within the protein window and
- * each food's least and most grams. `null` where no grams keep to the window.
+ * each food's least and most grams. `null` where no grams keep to the window, or none reach `wanted` (a fraction):
+ * the bound only falls on the way to the optimum, so that a set which can't reach it is given up early.
  *
  * max min_i (sum_j g_j b_ij) / (sum_j g_j c_j) is a linear-fractional programme. Charnes and Cooper's substitution
  * y = t g with sum_j c_j y_j = 1 makes it linear (Naval Research Logistics Quarterly 1962;9:181,
@@ -26,7 +27,7 @@ export interface BestGrams {
  * programme: it has as few rows as there are foods, plus two, and a feasible basis that needs no search (one stave's
  * price 1, the score's bound high enough for every food). The grams are the prices of its rows.
  */
-export function bestGrams(set: readonly Candidate[], window: Window): BestGrams | null {
+export function bestGrams(set: readonly Candidate[], window: Window, wanted = 0): BestGrams | null {
   const k = set.length
   const S = STAVES.length
   const ceilings = (window.energyAtMostKcal === null ? 0 : 1) + (window.massAtMostG === null ? 0 : 1)
@@ -37,7 +38,7 @@ export function bestGrams(set: readonly Candidate[], window: Window): BestGrams 
   const atBound = atCeilings + ceilings
   const atSlack = atBound + 1
   const columns = atSlack + k + 1
-  const tableau = emptyTableau(k + 2, columns)
+  const tableau = borrowedTableau(k + 2, columns)
   const { cells, basis } = tableau
   const width = columns + 1
   const rowT = k
@@ -103,7 +104,7 @@ export function bestGrams(set: readonly Candidate[], window: Window): BestGrams 
   }
   if (row === -1) return null
   pivot(tableau, row, atBound)
-  if (!optimise(tableau)) return null
+  if (!optimise(tableau, -wanted)) return null
 
   const costs = (k + 2) * width
   const t = cells[costs + atSlack + k]!

@@ -1,6 +1,7 @@
 import { STAVES } from '../nutrition/amino-acids.ts'
 import type { Candidate } from './candidate.ts'
 import { bestGrams, type Window } from './grams.ts'
+import { bestGramsOfFew } from './pair-grams.ts'
 
 /** A set of foods with its best grams, as the search compares them. */
 export interface Proposal {
@@ -58,7 +59,7 @@ export class Search {
   private readonly space: SearchSpace
   private readonly aim: SearchAim
   /** what is known of each set that was looked at, by its key; null: no grams, or not worth weighing */
-  private readonly seen = new Map<string, Proposal | null>()
+  private readonly seen = new Map<number | string, Proposal | null>()
   private readonly proposals: Proposal[] = []
   private readonly place = new Map<Candidate, number>()
   /** per food: each stave of its own, as a fraction of the pattern */
@@ -86,7 +87,8 @@ export class Search {
     let seeds: number[][] = [[]]
     for (let size = 1; size <= free && !this.complete(); size++) {
       const lacking: number[][] = []
-      for (const set of this.grown(seeds)) {
+      for (const { set, reach } of this.grown(seeds)) {
+        if (reach < this.wanted()) break
         if (this.weigh(set) === null) lacking.push(set)
       }
       // Pairs are grown from every single food, reachable or not: two that fail alone may do together.
@@ -102,22 +104,27 @@ export class Search {
     return this.reached >= this.aim.enough
   }
 
-  /** Each seed with each food that is left, once, those with the highest bound first. */
-  private grown(seeds: readonly number[][]): number[][] {
-    const sets: { set: number[]; bound: number }[] = []
-    const met = new Set<string>()
+  /** Each seed with each food that is left, once, those with the highest bound first; hopeless ones are left out. */
+  private grown(seeds: readonly number[][]): Bounded[] {
+    const sets: Bounded[] = []
+    const met = new Set<number | string>()
+    const wanted = this.wanted()
     for (const seed of seeds) {
       const bound = this.boundOf(seed)
-      for (let food = 0; food < this.own.length; food++) {
-        if (seed.includes(food)) continue
-        const set = [...seed, food].sort((a, b) => a - b)
-        const key = set.join()
-        if (met.has(key) || !this.fits(set)) continue
-        met.add(key)
-        sets.push({ set, bound: leastOf(bound, this.own[food]!) })
+      // From single foods each pair comes twice: the second food is then the later one.
+      for (let food = seed.length === 1 ? seed[0]! + 1 : 0; food < this.own.length; food++) {
+        const reach = leastOf(bound, this.own[food]!)
+        if (reach < wanted || seed.includes(food)) continue
+        const set = seed.length < 2 ? [...seed, food] : [...seed, food].sort((a, b) => a - b)
+        if (seed.length > 1) {
+          const key = keyOf(set)
+          if (met.has(key)) continue
+          met.add(key)
+        }
+        if (this.fits(set)) sets.push({ set, reach })
       }
     }
-    return sets.sort((a, b) => b.bound - a.bound).map(({ set }) => set)
+    return sets.sort((a, b) => b.reach - a.reach)
   }
 
   /** The best sets of a size and, so that no short stave is forgotten, the best for each food. */
@@ -158,7 +165,10 @@ export class Search {
         const chosen = this.chosenOf(proposal)
         const rests = chosen.map(out => chosen.filter(i => i !== out))
         for (const rest of rests) if (rest.length > 0 && this.fits(rest)) this.weigh(rest)
-        for (const set of this.grown([...rests, chosen])) this.weigh(set)
+        for (const { set, reach } of this.grown([...rests, chosen])) {
+          if (reach < this.wanted()) break
+          this.weigh(set)
+        }
       }
     }
   }
@@ -169,13 +179,11 @@ export class Search {
 
   /** The exact grams of the forced foods and some chosen ones; null where none keep to the window, or none could help. */
   private weigh(chosen: readonly number[]): Proposal | null {
-    const key = chosen.join()
+    const key = keyOf(chosen)
     const known = this.seen.get(key)
     if (known !== undefined) return known
-    const wanted = this.best - this.aim.slack
-    const hopeless = leastOf(this.boundOf(chosen), null) < wanted - SAME
     const set = [...this.space.forced, ...chosen.map(i => this.space.open[i]!)]
-    const proposal = hopeless ? null : proposalOf(set, this.space.window)
+    const proposal = proposalOf(set, this.space.window, this.wanted())
     this.seen.set(key, proposal)
     if (proposal !== null) {
       this.proposals.push(proposal)
@@ -183,6 +191,12 @@ export class Search {
       if (proposal.quality >= 1) this.reached++
     }
     return proposal
+  }
+
+  /** What a set must reach to be worth weighing, a fraction: 100 %, once nothing needs to be grown any more. */
+  private wanted(): number {
+    if (this.complete()) return 1 - SAME
+    return this.best - this.aim.slack - SAME
   }
 
   /** The most that each stave of a set could be, whatever the grams: that of its food with most of it. */
@@ -224,27 +238,43 @@ function raise(bound: Float64Array, own: Float64Array): void {
   for (let i = 0; i < bound.length; i++) if (own[i]! > bound[i]!) bound[i] = own[i]!
 }
 
+/** A set of foods by their places, and what its shortest stave could be at the most. */
+interface Bounded {
+  set: number[]
+  reach: number
+}
+
+/** Sets of up to five foods have a number for a key, which is quicker to look up. */
+function keyOf(set: readonly number[]): number | string {
+  if (set.length > 5) return set.join()
+  let key = 0
+  for (const i of set) key = key * 1024 + i + 1
+  return key
+}
+
 /** The shortest stave of a bound, raised by one more food. */
-function leastOf(bound: Float64Array, own: Float64Array | null): number {
+function leastOf(bound: Float64Array, own: Float64Array): number {
   let least = Number.POSITIVE_INFINITY
   for (let i = 0; i < bound.length; i++) {
-    const stave = own === null ? bound[i]! : Math.max(bound[i]!, own[i]!)
+    const stave = Math.max(bound[i]!, own[i]!)
     if (stave < least) least = stave
   }
   return least
 }
 
-/** A set with its exact best grams; null where none keep to the window. */
-export function proposalOf(set: readonly Candidate[], window: Window): Proposal | null {
+/** A set with its exact best grams; null where none keep to the window, or reach what is wanted (a fraction). */
+export function proposalOf(set: readonly Candidate[], window: Window, wanted = 0): Proposal | null {
   let least = 0
   let most = 0
-  for (const { protein, leastG, mostG } of set) {
+  let plain = set.length < 3
+  for (const { protein, crude, leastG, mostG } of set) {
     least += protein * leastG
     most += protein * mostG
+    if (protein <= 0 || crude <= 0) plain = false
   }
   if (least > window.mostProteinG || most < window.leastProteinG) return null
-  const best = bestGrams(set, window)
-  if (best === null) return null
+  const best = plain ? bestGramsOfFew(set, window) : bestGrams(set, window, wanted)
+  if (best === null || best.quality < wanted) return null
   let kcal = 0
   for (let j = 0; j < set.length; j++) kcal += set[j]!.kcal * best.grams[j]!
   return {

@@ -21,6 +21,21 @@ export function emptyTableau(rows: number, columns: number): Tableau {
   return { rows, columns, cells: new Float64Array((rows + 1) * (columns + 1)), basis: new Int32Array(rows) }
 }
 
+const spare = new Map<number, Tableau>()
+
+/** An empty tableau that is used again for each programme of its size: hold on to none of it. */
+export function borrowedTableau(rows: number, columns: number): Tableau {
+  const key = rows * 4096 + columns
+  let tableau = spare.get(key)
+  if (tableau === undefined) {
+    tableau = emptyTableau(rows, columns)
+    spare.set(key, tableau)
+  } else {
+    tableau.cells.fill(0)
+  }
+  return tableau
+}
+
 /** Brings a column into the basis of a row. */
 export function pivot({ rows, columns, cells, basis }: Tableau, row: number, column: number): void {
   const width = columns + 1
@@ -41,9 +56,9 @@ export function pivot({ rows, columns, cells, basis }: Tableau, row: number, col
 
 /**
  * Pivots from a feasible basis until no cost is negative. The cost row holds -c, so that its last cell becomes the
- * optimum. False where the optimum is unbounded.
+ * optimum. False where the optimum is unbounded, or once the last cell is past `worthPast`: it only grows.
  */
-export function optimise(tableau: Tableau): boolean {
+export function optimise(tableau: Tableau, worthPast = Number.POSITIVE_INFINITY): boolean {
   const { rows, columns, cells, basis } = tableau
   const width = columns + 1
   const costs = rows * width
@@ -59,6 +74,7 @@ export function optimise(tableau: Tableau): boolean {
       }
     }
     if (column === -1) return true
+    if (cells[costs + columns]! > worthPast) return false
     let row = -1
     let ratio = Number.POSITIVE_INFINITY
     for (let i = 0; i < rows; i++) {
