@@ -71,7 +71,11 @@ export function measureOf(grams: string | undefined, description: string | undef
     .replace(/teaspoons?/, 'tsp')
     .replace(/^cups?\b/, 'cup')
     .replace(/\s*\(.*$/, '')
+    // An inch mark, and what follows it, is no word.
+    .replace(/,? *[\d/-]*".*$/, '')
     .replace(/\s+/g, ' ')
+    .replace(/[\s,]+$/, '')
+    .replace(/^(slice|spear|pod|sprout|cup|piece|fruit)s\b/, '$1')
     .trim()
   if (!(amount > 0) || USELESS.test(unit) || !/^[a-z]/.test(unit)) return []
   return [{ name: `1 ${unit}`, grams: Number((g / amount).toPrecision(4)), source: 'usda-sr28' }]
