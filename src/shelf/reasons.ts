@@ -6,6 +6,7 @@ const REASONS: Record<string, string> = {
   EACCES: 'no permission',
   EPERM: 'no permission',
   EISDIR: 'a folder stands where the file should',
+  ENOENT: 'no folder can be made there',
   ENOTDIR: 'part of the path is not a folder',
   EEXIST: 'part of the path is not a folder',
   ELOCKED: 'another shortstave holds it',

@@ -1,4 +1,4 @@
-import { existsSync, mkdirSync, renameSync } from 'node:fs'
+import { existsSync, renameSync } from 'node:fs'
 import { dirname, join } from 'node:path'
 import Conf from 'conf'
 import * as z from 'zod/mini'
@@ -6,6 +6,7 @@ import { DEFAULT_SETTINGS } from './default-settings.ts'
 import { reasonOf } from './reasons.ts'
 import { type Settings, settingsSchema } from './settings.ts'
 import { withLock } from './store-lock.ts'
+import { makeFolder } from './store-write.ts'
 
 /** The version that this program writes; settings of a newer one are left alone. */
 const SETTINGS_VERSION = 1
@@ -71,7 +72,7 @@ export class SettingsStore {
     const chosen: Partial<Settings> = Object.fromEntries(given.map(key => [key, parsed.data[key]]))
     let problem: string | null
     try {
-      mkdirSync(dirname(this.conf.path), { recursive: true })
+      makeFolder(dirname(this.conf.path))
       ;({ problem } = await withLock(this.conf.path, stillHeld => {
         if (!stillHeld()) return null
         return { problem: this.holding(chosen, () => this.keep({ ...this.read().settings, ...chosen })) }
@@ -149,6 +150,7 @@ export class SettingsStore {
   }
 
   private get conf(): Conf<Record<string, unknown>> {
+    if (this.opened === null && this.folder !== undefined) makeFolder(this.folder)
     this.opened ??= new Conf<Record<string, unknown>>({
       projectName: 'shortstave',
       projectSuffix: '',

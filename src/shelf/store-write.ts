@@ -1,5 +1,15 @@
-import { closeSync, fsyncSync, openSync, realpathSync, renameSync, rmSync, writeFileSync } from 'node:fs'
-import { dirname } from 'node:path'
+import {
+  closeSync,
+  existsSync,
+  fsyncSync,
+  mkdirSync,
+  openSync,
+  realpathSync,
+  renameSync,
+  rmSync,
+  writeFileSync,
+} from 'node:fs'
+import { dirname, resolve } from 'node:path'
 
 /** Unfinished writes of `path` are named so; what a killed process leaves can be told and taken away. */
 export const isUnfinished = (name: string, path: string): boolean =>
@@ -38,6 +48,24 @@ export function writeAtomically(
   }
   if (durable) settle(dirname(target))
   return true
+}
+
+/**
+ * Makes a folder and those above it. Node's own way of doing so never ends where a file system says of a folder that
+ * it makes that there is none (Linux's /proc does).
+ */
+export function makeFolder(folder: string): void {
+  const missing: string[] = []
+  for (let path = resolve(folder); !existsSync(path) && path !== dirname(path); path = dirname(path))
+    missing.push(path)
+  for (const path of missing.reverse()) {
+    try {
+      mkdirSync(path)
+    } catch (error) {
+      // Another process may have made it just now.
+      if ((error as NodeJS.ErrnoException).code !== 'EEXIST') throw error
+    }
+  }
 }
 
 /** Where a link points: a linked file stays linked. */

@@ -1,4 +1,4 @@
-import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync } from 'node:fs'
+import { existsSync, readdirSync, readFileSync, renameSync, rmSync } from 'node:fs'
 import { basename, dirname, join } from 'node:path'
 import Conf from 'conf'
 import * as z from 'zod/mini'
@@ -9,7 +9,7 @@ import { reasonOf } from './reasons.ts'
 import { type ServedPlate, servedPlateSchema, withoutPlate, withPlate } from './served-plate.ts'
 import { type Shelf, shelfSchema } from './shelf.ts'
 import { withLock } from './store-lock.ts'
-import { isUnfinished, writeAtomically } from './store-write.ts'
+import { isUnfinished, makeFolder, writeAtomically } from './store-write.ts'
 
 /** What came of a change. `saved` false: it holds for this session only, and `problem` says why. */
 export interface Kept {
@@ -174,7 +174,7 @@ export class ShelfStore {
   private async commit(apply: Apply): Promise<Kept> {
     const notices: string[] = []
     try {
-      mkdirSync(dirname(this.path), { recursive: true })
+      makeFolder(dirname(this.path))
       return await withLock(this.path, stillHeld => this.commitLocked(apply, notices, stillHeld))
     } catch (error) {
       return this.inMemory(apply, this.troubleOf(error), notices)
@@ -297,6 +297,7 @@ export class ShelfStore {
 
   /** Opened when first used: where the place itself cannot be, that is trouble to be told, not an exception. */
   private get conf(): Conf<Record<string, unknown>> {
+    if (this.opened === null && this.folder !== undefined) makeFolder(this.folder)
     this.opened ??= new Conf<Record<string, unknown>>({
       projectName: 'shortstave',
       projectSuffix: '',

@@ -298,6 +298,18 @@ describe('where nothing can be kept', () => {
     expect(readFileSync(wall, 'utf8')).toBe('in the way')
   })
 
+  it.runIf(existsSync('/proc/self'))(
+    'a place where folders cannot be made, however often one tries',
+    async () => {
+      const kept = await new ShelfStore('/proc/no-such-folder/home').change([add('tahini', 5)], 'add')
+      expect(kept).toMatchObject({
+        saved: false,
+        done: true,
+        problem: expect.stringContaining('no folder can be made there'),
+      })
+    },
+  )
+
   it('a folder where the file should be', async () => {
     const folder = freshFolder()
     mkdirSync(file(folder))
