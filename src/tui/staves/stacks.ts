@@ -23,3 +23,7 @@ export function stacksOf(portions: readonly Portion[], pattern: Pattern): Stack[
     return { stave, parts, total: parts.reduce((sum, part) => sum + part, 0) }
   })
 }
+
+/** The shortest of some stacks; of two that tie, the first. */
+export const shortestOf = (stacks: readonly Stack[]): Stack =>
+  stacks.reduce((least, stack) => (stack.total < least.total ? stack : least))
