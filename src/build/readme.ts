@@ -57,10 +57,14 @@ function screenOf(name: string): string {
   })
   const answer = findPairings(problemOf(state, knowledge))
   state = update(state, { event: 'paired', question: state.question, answer }, knowledge).state
+  const threeFoods = Math.max(
+    0,
+    answer.pairings.findIndex(({ portions }) => portions.length === 3),
+  )
   const keys: Record<string, string[]> = {
     shelf: [],
     bench: ['tab', 'w'],
-    plate: ['tab', 'down', 'down', 'enter'],
+    plate: ['tab', ...Array<string>(threeFoods).fill('down'), 'enter'],
   }
   for (const key of keys[name] ?? []) {
     const event = key.length === 1 ? ({ key: 'text', text: key } as const) : ({ key: key as 'tab' } as const)

@@ -86,6 +86,8 @@ export interface State {
   answer: PairingAnswer | null
   stale: boolean
   slow: boolean
+  /** counts the moments for which an answer has been waited for in sight */
+  spin: number
   /** counts what pairings depend on, so that a late answer to an old question is dropped */
   question: number
   refusal: string | null
@@ -165,6 +167,7 @@ export function firstState(of: {
     answer: null,
     stale: true,
     slow: false,
+    spin: 0,
     question: 1,
     refusal: null,
     chosen: 0,

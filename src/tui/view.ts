@@ -4,12 +4,18 @@ import { clip, wrapLines } from './text/lines.ts'
 import { widthOf, withoutStyles } from './text/width.ts'
 import { PAGE_FRAME } from './updates/page-keys.ts'
 import { benchView } from './views/bench-view.ts'
-import { fitted, keyLine, LEAST, promptLines, rule } from './views/frame.ts'
+import { bodyRows, fitted, footLines, keyLines, LEAST, PROMPT_KEYS, rule } from './views/frame.ts'
 import { plateView } from './views/plate-view.ts'
 import { shelfView } from './views/shelf-view.ts'
+import { spokenLines } from './views/spoken.ts'
 
 /** The screen as lines: drawn from the state alone. */
 export function view(state: State, knowledge: Knowledge): string[] {
+  const lines = screenOf(state, knowledge)
+  return state.spoken ? spokenLines(lines) : lines
+}
+
+function screenOf(state: State, knowledge: Knowledge): string[] {
   if (state.columns < LEAST.columns || state.rows < LEAST.rows) return tooSmall(state)
   if (state.page !== null) return pageView(state)
   if (state.pasted !== null) return pastedView(state)
@@ -44,7 +50,7 @@ function pageView(state: State): string[] {
     state,
     [` ${STYLE.bold(clip(page.title, state.columns - 30))}${STYLE.dim(more)}`],
     shown.map(line => ` ${narrowed(line, state.columns - 2)}`),
-    ['', keyLine(state.columns, keys)],
+    ['', ...keyLines({ ...state, rows: 0 }, keys)],
   )
 }
 
@@ -70,26 +76,14 @@ function pastedView(state: State): string[] {
             .map(STYLE.dim),
         ],
   )
-  const foot = [
-    ...(state.prompt === null
-      ? [state.message === '' ? '' : ` ${clip(state.message, state.columns - 2)}`]
-      : promptLines(state)),
-    keyLine(
-      state.columns,
-      state.prompt === null
-        ? [
-            ['Enter', state.pasteCursor === 0 ? 'put them there' : 'mend the line'],
-            ['#', 'drop the line'],
-            ['Esc', 'leave the list'],
-          ]
-        : [
-            ['Enter', 'take it'],
-            ['Esc', 'leave it'],
-          ],
-    ),
+  const keys: [string, string][] = [
+    ['Enter', state.pasteCursor === 0 ? 'put them there' : 'mend the line'],
+    ['#', 'drop the line'],
+    ['Esc', 'leave the list'],
   ]
+  const foot = [...footLines(state, ''), ...keyLines(state, state.prompt === null ? keys : PROMPT_KEYS)]
   const top = [rule(`pasted: ${lines.length} lines, ${good} understood`, state.columns), under(0, put), '']
-  const room = Math.max(1, state.rows - 1 - top.length - foot.length)
+  const room = bodyRows(state, top, foot)
   let first = 0
   while (first < state.pasteCursor - 1 && blocks.slice(first, state.pasteCursor).flat().length > room) first++
   return fitted(state, top, blocks.slice(first).flat(), foot)

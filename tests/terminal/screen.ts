@@ -93,6 +93,15 @@ export class Screen {
     return this.until(() => !this.text().includes(gone), `no ${gone}`, withinMs)
   }
 
+  /** Waits until no line is longer than the window is wide: the emulator keeps what stood beyond its new edge. */
+  async fits(columns: number, withinMs = 15_000): Promise<string> {
+    return this.until(
+      () => this.lines().every(line => line.length <= columns),
+      `lines of at most ${columns} columns`,
+      withinMs,
+    )
+  }
+
   async ends(withinMs = 15_000): Promise<number> {
     await this.until(() => this.exitCode !== null, 'the end of the program', withinMs)
     return this.exitCode!

@@ -73,7 +73,7 @@ describe('shelf: letters find, signs act', () => {
     const first = (state: ReturnType<typeof opened>) =>
       plain(view(state, knowledge))
         .split('\n')
-        .find(line => line.includes('▸'))
+        .find(line => line.startsWith(' ▸ ') && !line.includes('bench'))
     const byDay = typed(opened(), '/').state
     expect(first(byDay)).toContain('Tofu')
     expect(first(typed(byDay, '/').state)).toContain('Lentils')
@@ -232,7 +232,7 @@ describe('plate', () => {
     const lentils = { food: knowledge.table.foodById.get('lentils-red-dry')!, grams: 80 }
     const alone = { ...plate, plate: [lentils] }
     const screen = plain(view(alone, knowledge))
-    const said = Number(/would lift it: 1 to (\d+)/.exec(screen)![1])
+    const said = Number(/lifts it 1 {2}to +(\d+)/.exec(screen)![1])
     const tried = typed(alone, '1').state
     expect(tried.plate).not.toEqual([lentils])
     expect(plain(view(tried, knowledge))).toContain(`DIAAS ${said} `)

@@ -21,7 +21,10 @@ export interface DrawOptions {
 
 /** Narrower than this the staves are laid down: a line a stave. */
 const UPRIGHT_FROM_COLUMNS = 56
-const EIGHTHS = [' ', '▁', '▂', '▃', '▄', '▅', '▆', '▇', '█']
+/** Never a full block: sketches that stand under one another in a list would run together. */
+const LEVELS = ['▁', '▂', '▃', '▄', '▅', '▆', '▇']
+/** The highest level, % of the pattern. */
+const SKETCH_REACH = 120
 
 /**
  * The staves: nine upright bars, each stacked by food, the pattern's 100 line and the water line at the shortest
@@ -41,10 +44,11 @@ export function stavesAsText(staves: Staves): string {
   return `In % of the pattern: ${list}. Shortest: ${STAVE_NAMES[shortest]}.`
 }
 
-/** A sketch of the staves in nine characters, in their order; a full block is 120 % of the pattern or more. */
+/** A sketch of the staves in nine characters, in their order; the highest is 120 % of the pattern or more. */
 export function stavesSketch(staves: Staves, ascii = false): string {
   return STAVES.map(stave => {
-    const eighths = Math.min(8, Math.max(1, Math.round((staves[stave] / 120) * 8)))
-    return ascii ? String(eighths) : EIGHTHS[eighths]!
+    const share = Math.min(1, staves[stave] / SKETCH_REACH)
+    const level = Math.max(1, Math.round(share * LEVELS.length))
+    return ascii ? String(level) : LEVELS[level - 1]!
   }).join('')
 }

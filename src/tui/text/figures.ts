@@ -15,6 +15,12 @@ export function diaasText(score: Pick<PlateScore, 'diaas' | 'band' | 'class'>): 
   return `DIAAS ${wholeScore(score.diaas)} (${percent(score.band.low)}-${percent(score.band.high)}), ${words}`
 }
 
+/** `DIAAS 97 (89-104)`: the score with its band alone. */
+export const shortDiaas = ({ diaas, band }: Pick<PlateScore, 'diaas' | 'band'>): string =>
+  diaas === null || band === null
+    ? 'no protein to score'
+    : `DIAAS ${wholeScore(diaas)} (${percent(band.low)}-${percent(band.high)})`
+
 /** A score as a whole number that never rounds up into a better class. */
 export function wholeScore(diaas: number): string {
   const rounded = Math.round(diaas)

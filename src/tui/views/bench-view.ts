@@ -1,54 +1,34 @@
 import { allergenName } from '../../kitchen/allergen-names.ts'
-import { STANDING_NOTE } from '../../kitchen/cautions.ts'
-import { STAVE_LABELS, STAVES } from '../../nutrition/amino-acids.ts'
+import { STAVE_LABELS, STAVES, type Stave } from '../../nutrition/amino-acids.ts'
+import type { PlateScore } from '../../nutrition/plate-score.ts'
 import type { Pairing } from '../../pairing/problem.ts'
 import { targetOf } from '../problem-of.ts'
 import type { State } from '../state.ts'
-import { stavesAsText, stavesSketch } from '../staves/draw-staves.ts'
+import { drawStaves, stavesAsText, stavesSketch } from '../staves/draw-staves.ts'
 import { inFoodColour, letterOf } from '../staves/palette.ts'
 import { STYLE } from '../style.ts'
-import { diaasText, grams, kcal, signed, wholeScore } from '../text/figures.ts'
+import { diaasText, grams, kcal, shortDiaas, signed, wholeScore } from '../text/figures.ts'
 import { clip, padEnd, wrapLines } from '../text/lines.ts'
-import { widthOf } from '../text/width.ts'
-import { fitted, keyLine, promptLines, topLine } from './frame.ts'
+import { widthOf, withoutStyles } from '../text/width.ts'
+import {
+  beside,
+  bodyRows,
+  fitted,
+  footLines,
+  isWide,
+  type KeyName,
+  keyLines,
+  PROMPT_KEYS,
+  topLine,
+} from './frame.ts'
+import { standingNote } from './standing-note.ts'
 
-const SPINNER = '◌'
+/** The faces of the spinner, each shown for a moment while an answer is waited for. */
+const SPINNER = ['◴', '◷', '◶', '◵']
+/** Columns of the chosen pairing's staves, beside a wide list, with the gap before them. */
+const PANEL = 62
 
-/** Where a plate is worked out: the target and the limits, and the pairings that follow from them. */
-export function benchView(state: State, colour: boolean): string[] {
-  const { settings, columns } = state
-  const servings = `${settings.servings} ${settings.servings === 1 ? 'serving' : 'servings'}`
-  const top = [
-    topLine(
-      state,
-      `target ${Math.round(targetOf(settings))} g · ${servings} · up to ${settings.foodsAtMost} foods`,
-    ),
-    STYLE.dim(clip(` ${limitsText(state)}`, columns - 1)),
-    '',
-  ]
-  const foot = [
-    ...(state.prompt === null
-      ? [
-          state.message === ''
-            ? STYLE.dim(clip(` ${STANDING_NOTE}`, columns - 1))
-            : ` ${clip(state.message, columns - 2)}`,
-        ]
-      : promptLines(state)),
-    keyLine(
-      columns,
-      state.prompt === null
-        ? KEYS
-        : [
-            ['Enter', 'take it'],
-            ['Esc', 'leave it'],
-          ],
-    ),
-  ]
-  const room = Math.max(1, state.rows - 1 - top.length - foot.length)
-  return fitted(state, top, bodyOf(state, colour, room), foot)
-}
-
-const KEYS: [string, string][] = [
+const KEYS: readonly KeyName[] = [
   ['Enter', 'to the plate'],
   ['w', 'why'],
   ['c', 'compare'],
@@ -60,34 +40,76 @@ const KEYS: [string, string][] = [
   ['d', 'dairy'],
   ['l', 'energy'],
   ['b', 'body mass'],
+  ['u', 'usual ranges'],
+  ['p', 'pattern'],
+  ['Tab', 'plate'],
 ]
 
-function limitsText({ settings, slow, stale }: State): string {
+/** Where a plate is worked out: the target and the limits, and the pairings that follow from them. */
+export function benchView(state: State, colour: boolean): string[] {
+  const { settings, columns } = state
+  const servings = `${settings.servings} ${settings.servings === 1 ? 'serving' : 'servings'}`
+  const target = `target ${Math.round(targetOf(settings))} g`
+  const top = [
+    topLine(
+      state,
+      columns < 76
+        ? `${target} · ${servings}`
+        : `${target} · ${servings} · up to ${settings.foodsAtMost} foods`,
+    ),
+    STYLE.dim(clip(` ${limitsText(state)}`, columns - 1)),
+    '',
+  ]
+  const foot = [
+    ...footLines(state, standingNote(state)),
+    ...keyLines(state, state.prompt === null ? KEYS : PROMPT_KEYS),
+  ]
+  const chosen = state.answer?.pairings[state.chosen]
+  if (!isWide(state) || state.spoken || chosen === undefined || state.compared !== null)
+    return fitted(state, top, bodyOf(state, columns, colour, bodyRows(state, top, foot)), foot)
+  const left = bodyOf({ ...state, why: false }, columns - PANEL, colour, bodyRows(state, top, foot))
+  const panel = panelOf(chosen, colour)
+  const body = beside(left, isWaiting(state) ? panel.map(STYLE.dim) : panel, columns - PANEL + 2)
+  return fitted(state, top, body, foot)
+}
+
+const isWaiting = ({ stale, slow }: State): boolean => stale && slow
+
+/** The chosen pairing's staves and reason, beside the list. */
+function panelOf(pairing: Pairing, colour: boolean): string[] {
+  const { score, portions } = pairing
+  const width = PANEL - 4
+  const drawing = drawStaves({ portions, pattern: score.pattern, width, height: 12, colour })
+  return [...drawing, '', ...reasonLines(pairing, width, 0)]
+}
+
+function limitsText(state: State): string {
+  const { settings } = state
   const parts = [
+    isWaiting(state) ? `${SPINNER[state.spin % SPINNER.length]} working it out` : '',
     settings.pattern === 'fao-2013-over-3y' ? 'pattern FAO 2013, over 3 years' : 'pattern WHO 2007, adult',
     settings.without.length === 0 ? '' : `without ${settings.without.map(allergenName).join(', ')}`,
     settings.eggs ? 'eggs' : '',
     settings.dairy ? 'dairy' : '',
     settings.energyAtMostKcal === null ? '' : `at most ${settings.energyAtMostKcal} kcal`,
-    stale && slow ? `${SPINNER} working it out` : '',
   ]
   return parts.filter(part => part !== '').join(' · ')
 }
 
-function bodyOf(state: State, colour: boolean, room: number): string[] {
-  const { answer, refusal, columns } = state
+function bodyOf(state: State, columns: number, colour: boolean, room: number): string[] {
+  const { answer, refusal } = state
   if (refusal !== null) return wrapLines(` ${refusal}`, columns - 2, 1)
-  if (answer === null) return [` ${SPINNER} working it out`]
+  if (answer === null) return [` ${SPINNER[state.spin % SPINNER.length]} working it out`]
   const lines: string[] = []
   if (answer.reason !== null) lines.push(...wrapLines(` ${answer.reason}`, columns - 2, 1), '')
   if (!answer.reached && answer.pairings.length > 0) lines.push(' The nearest plate:')
   const compared = state.compared === null ? undefined : answer.pairings[state.compared]
   const chosen = answer.pairings[state.chosen]
   if (compared !== undefined && chosen !== undefined && compared !== chosen) {
-    lines.push(...sideBySide(compared, chosen, state))
+    lines.push(...sideBySide(compared, chosen, columns, room - lines.length))
     return lines
   }
-  const blocks = answer.pairings.map((pairing, i) => pairingLines(pairing, i, state, colour))
+  const blocks = answer.pairings.map((pairing, i) => pairingLines(pairing, i, state, columns, colour))
   // The chosen one stays in sight with its reason; the list begins further down where they don't all fit.
   const before = blocks.map(block => block.length)
   let first = 0
@@ -97,11 +119,10 @@ function bodyOf(state: State, colour: boolean, room: number): string[] {
   )
     first++
   lines.push(...blocks.slice(first).flat())
-  return state.stale && state.slow ? lines.map(STYLE.dim) : lines
+  return isWaiting(state) ? lines.map(line => STYLE.dim(withoutStyles(line))) : lines
 }
 
-function pairingLines(pairing: Pairing, i: number, state: State, colour: boolean): string[] {
-  const { columns } = state
+function pairingLines(pairing: Pairing, i: number, state: State, columns: number, colour: boolean): string[] {
   const under = i === state.chosen
   const foods = pairing.portions.map(({ food, grams: g }, j) => {
     const letter = colour ? inFoodColour(j, letterOf(j)) : letterOf(j)
@@ -111,11 +132,12 @@ function pairingLines(pairing: Pairing, i: number, state: State, colour: boolean
   const lines = joinFitting(foods, columns - 7).map((line, j) =>
     j === 0 ? ` ${under ? '▸' : ' '} ${STYLE.bold(String(i + 1))}  ${line}` : `      ${line}`,
   )
+  const lift = pairing.portions.length > 1 && score.lift !== null ? Math.round(score.lift) : 0
   const facts = [
     `${score.proteinG.toFixed(0)} g protein`,
-    diaasText(score),
+    STYLE.bold(shortDiaas(score)),
     `shortest ${score.limiting === null ? '-' : STAVE_LABELS[score.limiting]}`,
-    ...(pairing.portions.length > 1 && score.lift !== null ? [`lift ${signed(score.lift)}`] : []),
+    ...(lift === 0 ? [] : [`lift ${signed(lift)}`]),
     kcal(score.kcal),
   ].join(' · ')
   const sketch = score.staves === null || state.spoken ? '' : `  ${stavesSketch(score.staves)}`
@@ -123,22 +145,22 @@ function pairingLines(pairing: Pairing, i: number, state: State, colour: boolean
   lines.push(...wrapLines(`      ${facts}${fits ? sketch : ''}`, columns - 1, 6))
   if (under && state.spoken && score.staves !== null)
     lines.push(...wrapLines(`      ${stavesAsText(score.staves)}`, columns - 1, 6))
-  if (under && state.why) {
-    lines.push(...pairing.why.flatMap(reason => wrapLines(`      ${reason}`, columns - 1, 6)).map(STYLE.dim))
-    const lift = pairing.nextLift
-    if (lift !== null) {
-      const amount = `${lift.deltaG < 0 ? `${grams(-lift.deltaG)} less` : grams(lift.deltaG)} ${lift.food.name}`
-      lines.push(
-        ...wrapLines(
-          `      Would lift it: ${amount}${lift.onShelf ? '' : ' (not on your shelf)'}, to DIAAS ${wholeScore(lift.diaas)}.`,
-          columns - 1,
-          6,
-        ).map(STYLE.dim),
-      )
-    }
-  }
+  if (under && state.why) lines.push(...reasonLines(pairing, columns - 1, 6))
   lines.push('')
   return lines
+}
+
+/** What each food brings, what is shortest now, and what would lift it. */
+function reasonLines({ why, nextLift }: Pairing, width: number, indent: number): string[] {
+  const start = ' '.repeat(indent)
+  const reasons =
+    nextLift === null
+      ? why
+      : [
+          ...why,
+          `Would lift it: ${nextLift.deltaG < 0 ? `${grams(-nextLift.deltaG)} less` : grams(nextLift.deltaG)} ${nextLift.food.name}${nextLift.onShelf ? '' : ' (not on your shelf)'}, to DIAAS ${wholeScore(nextLift.diaas)}.`,
+        ]
+  return reasons.flatMap(reason => wrapLines(start + reason, width, indent)).map(STYLE.dim)
 }
 
 /** Pieces on as few lines as they fit. */
@@ -153,38 +175,42 @@ function joinFitting(pieces: readonly string[], width: number): string[] {
   return lines
 }
 
-function sideBySide(a: Pairing, b: Pairing, state: State): string[] {
-  const half = Math.floor((state.columns - 5) / 2)
+/** Two pairings side by side: foods, figures, and each stave of both. */
+function sideBySide(a: Pairing, b: Pairing, columns: number, room: number): string[] {
+  const half = Math.floor((Math.min(columns, 120) - 5) / 2)
   const column = (pairing: Pairing): string[] => {
     const { score } = pairing
     return [
-      ...pairing.portions.map(({ food, grams: g }, j) =>
-        clip(`${letterOf(j)} ${grams(g)} ${food.name}`, half),
-      ),
-      '',
-      clip(`${score.proteinG.toFixed(1)} g protein`, half),
-      clip(`${score.adjustedProteinG.toFixed(1)} g adjusted protein`, half),
       clip(diaasText(score), half),
-      `PDCAAS ${Math.round(score.pdcaas ?? 0)} · ${kcal(score.kcal)}`,
-      `leucine ${score.leucineG.toFixed(1)} g · fibre ${score.fibreG.toFixed(0)} g`,
-      `${grams(score.grams)} on the plate`,
-      '',
-      ...(score.staves === null
-        ? []
-        : STAVES.map(
-            stave =>
-              `${STAVE_LABELS[stave]}${stave === score.limiting ? '*' : ' '} ${String(Math.floor(score.staves![stave])).padStart(4)} ${'▇'.repeat(Math.min(half - 12, Math.round(score.staves![stave] / 10)))}`,
-          )),
+      clip(`${score.proteinG.toFixed(1)} g protein, ${score.adjustedProteinG.toFixed(1)} g adjusted`, half),
+      clip(
+        `${kcal(score.kcal)} · ${grams(score.grams)} on the plate · PDCAAS ${Math.round(score.pdcaas ?? 0)}`,
+        half,
+      ),
+      clip(`leucine ${score.leucineG.toFixed(1)} g · fibre ${score.fibreG.toFixed(0)} g`, half),
+      ...(score.staves === null ? [] : STAVES.map(stave => staveLine(score, stave, half))),
     ]
   }
-  const [left, right] = [column(a), column(b)]
-  // Foods differ in number: what follows them stands side by side.
-  const foods = Math.max(a.portions.length, b.portions.length)
-  const level = (lines: string[], own: number) => [
-    ...lines.slice(0, own),
-    ...Array<string>(foods - own).fill(''),
-    ...lines.slice(own),
+  const count = Math.max(a.portions.length, b.portions.length)
+  const foods = (pairing: Pairing) =>
+    Array.from({ length: count }, (_, j) => {
+      const portion = pairing.portions[j]
+      return portion === undefined
+        ? ''
+        : clip(`${letterOf(j)} ${grams(portion.grams)} ${portion.food.name}`, half)
+    })
+  const [left, right] = [
+    [...foods(a), ...column(a)],
+    [...foods(b), ...column(b)],
   ]
-  const [l, r] = [level(left, a.portions.length), level(right, b.portions.length)]
-  return l.map((line, i) => ` ${padEnd(line, half)} │ ${r[i] ?? ''}`)
+  return left.slice(0, Math.max(1, room)).map((line, i) => ` ${padEnd(line, half)} │ ${right[i] ?? ''}`)
+}
+
+/** A stave laid down: its figure, and a bar that ends at 140 %. */
+function staveLine(score: PlateScore, stave: Stave, width: number): string {
+  const value = score.staves![stave]
+  const room = width - 10
+  const bar = '▇'.repeat(Math.max(0, Math.min(room, Math.round((value / 140) * room))))
+  const name = `${STAVE_LABELS[stave]}${stave === score.limiting ? '*' : ' '}`
+  return `${name} ${String(Math.floor(value + 1e-9)).padStart(4)} ${bar}`
 }

@@ -5,39 +5,86 @@ import { widthOf } from '../text/width.ts'
 
 /** The least terminal that the screens fit into. */
 export const LEAST = { columns: 60, rows: 16 }
+/** From so many columns on, what is under the cursor stands beside the list. */
+const BESIDE_FROM = 124
+/** From so many rows on, the keys may take two lines. */
+const TWO_KEY_LINES_FROM = 22
 
-/** The line at the top: where one is, and what this shelf is. */
+export type KeyName = readonly [key: string, what: string]
+/** What works while a line is being typed. */
+export const PROMPT_KEYS: readonly KeyName[] = [
+  ['Enter', 'take it'],
+  ['Esc', 'leave it'],
+]
+
+/** Is the window wide enough for two columns? */
+export const isWide = ({ columns }: State): boolean => columns >= BESIDE_FROM
+
+/** The line at the top: where one is (also without styles), and what this shelf or plate is. */
 export function topLine(state: State, right: string): string {
-  const trail = SCREENS.map(name => (name === state.screen ? STYLE.bold(name) : STYLE.dim(name))).join(
-    STYLE.dim(' ······· '),
+  const trail = SCREENS.map(name => (name === state.screen ? STYLE.bold(`▸ ${name}`) : STYLE.dim(name))).join(
+    STYLE.dim(' ····· '),
   )
   const room = state.columns - widthOf(trail) - 4
-  return ` ${trail}  ${padEnd('', Math.max(0, room - widthOf(right)))}${STYLE.dim(clip(right, Math.max(0, room)))}`
+  return ` ${trail} ${padEnd('', Math.max(0, room - widthOf(right)))} ${clip(right, Math.max(0, room))}`
 }
 
-/** The lines at the bottom: what works here. Keys that don't fit the width go, the last first, but never `?`. */
-export function keyLine(columns: number, keys: readonly [key: string, what: string][]): string {
-  const help: [string, string] = ['?', 'all keys']
-  const text = ([key, what]: readonly [string, string]) => `${key} ${what}`
-  const shown: [string, string][] = []
-  let width = 1 + widthOf(text(help))
+/**
+ * The lines at the bottom: what works here, the most used first. Two lines where the window is high enough; keys that
+ * don't fit all the same go, the last first, but never `?`.
+ */
+export function keyLines({ columns, rows }: State, keys: readonly KeyName[]): string[] {
+  const help: KeyName = ['?', 'all keys']
+  const most = rows >= TWO_KEY_LINES_FROM ? 2 : 1
+  const lines = fill(columns, most, keys, help)
+  return lines.map(
+    line => ` ${line.map(([key, what]) => `${STYLE.bold(key)} ${STYLE.dim(what)}`).join('   ')}`,
+  )
+}
+
+function fill(columns: number, most: number, keys: readonly KeyName[], help: KeyName): KeyName[][] {
+  const widthOfKey = ([key, what]: KeyName) => widthOf(key) + widthOf(what) + 4
+  const lines: KeyName[][] = [[]]
+  let width = 0
   for (const entry of keys) {
-    const more = widthOf(text(entry)) + 3
-    if (width + more > columns - 1) break
-    shown.push([...entry])
-    width += more
+    const last = lines.length === most
+    const room = columns + 1 - (last ? widthOfKey(help) : 0)
+    if (width + widthOfKey(entry) > room) {
+      if (last) break
+      lines.push([])
+      width = 0
+    }
+    lines.at(-1)!.push(entry)
+    width += widthOfKey(entry)
   }
-  return ` ${[...shown, help].map(([key, what]) => `${STYLE.bold(key)} ${STYLE.dim(what)}`).join('   ')}`
+  if (width + widthOfKey(help) > columns + 1) lines.push([])
+  lines.at(-1)!.push(help)
+  return lines
 }
 
 /** The line that is being typed into, with its label and what is wrong with it. */
 export function promptLines(state: State): string[] {
   const { prompt, columns } = state
   if (prompt === null) return []
-  const typed = prompt.fresh ? STYLE.reverse(prompt.text) : `${prompt.text}${STYLE.reverse(' ')}`
-  const lines = [` ${STYLE.bold(clip(prompt.label, columns - 2))}`, ` > ${typed}`]
+  const lines = [` ${STYLE.bold(clip(prompt.label, columns - 2))}`, ` > ${typedText(prompt, columns - 4)}`]
   if (prompt.problem !== null) lines.push(...wrapLines(`   ${prompt.problem}`, columns - 1, 3).slice(0, 3))
   return lines
+}
+
+/** What is typed, with the caret; the end of it where it is longer than the line. */
+function typedText({ text, fresh }: { text: string; fresh: boolean }, room: number): string {
+  const letters = [...text]
+  let from = 0
+  while (widthOf(letters.slice(from).join('')) > room - 1) from++
+  const shown = letters.slice(from).join('')
+  return fresh ? STYLE.reverse(shown) : `${shown}${STYLE.reverse(' ')}`
+}
+
+/** Above the keys: the open line, or what was said last, or else a line that always stands there. */
+export function footLines(state: State, standing: string): string[] {
+  if (state.prompt !== null) return promptLines(state)
+  if (state.message !== '') return [` ${clip(state.message, state.columns - 2)}`]
+  return [standing === '' ? '' : STYLE.dim(` ${clip(standing, state.columns - 2)}`)]
 }
 
 /** A rule across the screen with a title in it. */
@@ -52,6 +99,12 @@ export function windowOf<T>(rows: readonly T[], cursor: number, room: number): {
   return { shown: rows.slice(first, first + room), first }
 }
 
+/** Two columns of lines side by side. */
+export function beside(left: readonly string[], right: readonly string[], leftColumns: number): string[] {
+  const count = Math.max(left.length, right.length)
+  return Array.from({ length: count }, (_, i) => `${padEnd(left[i] ?? '', leftColumns)}${right[i] ?? ''}`)
+}
+
 /** The lines fitted to the screen: the body cut or filled, the foot at the bottom. One row stays free for the terminal. */
 export function fitted(
   state: State,
@@ -59,7 +112,11 @@ export function fitted(
   body: readonly string[],
   foot: readonly string[],
 ): string[] {
-  const room = Math.max(0, state.rows - 1 - top.length - foot.length)
+  const room = bodyRows(state, top, foot)
   const filled = [...body.slice(0, room), ...Array<string>(Math.max(0, room - body.length)).fill('')]
   return [...top, ...filled, ...foot]
 }
+
+/** The rows that are left between top and foot. */
+export const bodyRows = ({ rows }: State, top: readonly string[], foot: readonly string[]): number =>
+  Math.max(0, rows - 1 - top.length - foot.length)

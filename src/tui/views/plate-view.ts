@@ -1,21 +1,39 @@
 import type { Food } from '../../foods/food.ts'
 import { scoreBasis } from '../../foods/score.ts'
 import { allergenName } from '../../kitchen/allergen-names.ts'
-import { cautionsFor, STANDING_NOTE } from '../../kitchen/cautions.ts'
-import { STAVE_NAMES } from '../../nutrition/amino-acids.ts'
+import { type Caution, cautionsFor } from '../../kitchen/cautions.ts'
+import { STAVE_LABELS, STAVE_NAMES, STAVES } from '../../nutrition/amino-acids.ts'
 import { type PlateScore, scorePlate } from '../../nutrition/plate-score.ts'
 import { liftsOf, targetOf } from '../problem-of.ts'
 import type { Knowledge, State } from '../state.ts'
-import { drawStaves, stavesAsText } from '../staves/draw-staves.ts'
-import { fillOf, inFoodColour, letterOf } from '../staves/palette.ts'
+import { drawStaves, stavesAsText, stavesSketch } from '../staves/draw-staves.ts'
+import { foodSign } from '../staves/palette.ts'
 import { STYLE } from '../style.ts'
 import { diaasText, grams, kcal, signed, wholeScore } from '../text/figures.ts'
 import { clip, padEnd, padStart, wrapLines } from '../text/lines.ts'
-import { fitted, keyLine, promptLines, topLine } from './frame.ts'
+import {
+  beside,
+  bodyRows,
+  fitted,
+  footLines,
+  isWide,
+  type KeyName,
+  keyLines,
+  PROMPT_KEYS,
+  topLine,
+} from './frame.ts'
+import { standingNote } from './standing-note.ts'
+
+/** Rows of the staves: fewer are not drawn, more add nothing. */
+const STAVES_ROWS = { least: 4, most: 18, mostWide: 28 }
+/** Columns of the foods, beside wide staves, with the gap before them. */
+const PANEL = 54
+/** Cautions of this weight are about the food itself (raw beans, cassava), and are never cut short. */
+const GRAVE = 74
 
 /** The chosen foods and grams, their staves, and what would lift them. */
 export function plateView(state: State, knowledge: Knowledge): string[] {
-  const { columns, plate, settings } = state
+  const { plate, settings } = state
   const score = scorePlate(plate, scoreBasis(knowledge.table, settings.pattern))
   const servings = settings.servings === 1 ? '' : ` · ${settings.servings} servings`
   const top = [
@@ -24,132 +42,170 @@ export function plateView(state: State, knowledge: Knowledge): string[] {
       `${Math.round(targetOf(settings))} g wanted, ${score.proteinG.toFixed(0)} g here${servings}`,
     ),
   ]
-  const foot = [...footOf(state), keyLine(columns, keysOf(state))]
-  if (plate.length === 0) {
-    const empty = [
-      '',
-      '   The plate is empty.',
-      '',
-      '   Tab to the bench and take a pairing, or press a to put a food on it.',
-    ]
-    return fitted(
-      state,
-      top,
-      [...empty, ...todayLines(state, knowledge)].map(line => clip(line, columns - 1)),
-      foot,
-    )
-  }
-  const room = state.rows - 1 - top.length - foot.length
-  const list = foodLines(state, score, knowledge.colour)
-  const facts = factLines(score, state)
-  const lifts = liftLines(state, knowledge)
-  const care = careLines(score, state)
-  // The list, the score and the lifts stay; the staves take the height that is left, and go first where there is none.
-  const fixed = list.length + facts.length + lifts.length + 1
-  const height = Math.min(12, room - fixed - 2 - (room > fixed + 12 ? care.length : 0))
-  const chart = chartLines(state, score, height, knowledge.colour)
-  const body = [...facts, ...chart, ...list, '', ...lifts, ...care]
+  const foot = [...footOf(state), ...keyLines(state, keysOf(state))]
+  const room = bodyRows(state, top, foot)
+  const body =
+    plate.length === 0
+      ? emptyLines(state, knowledge)
+      : isWide(state) && !state.spoken
+        ? wideBody(state, score, knowledge, room)
+        : stackedBody(state, score, knowledge, room)
   return fitted(state, top, body, foot)
 }
 
-function chartLines(state: State, score: PlateScore<Food>, height: number, colour: boolean): string[] {
-  if (score.staves === null) return []
-  if (state.spoken) return wrapLines(` ${stavesAsText(score.staves)}`, state.columns - 1, 1)
-  if (height < 4)
-    return [` ${stavesAsText(score.staves)}`]
-      .flatMap(line => wrapLines(line, state.columns - 1, 1))
-      .slice(0, 2)
-  return drawStaves({
-    portions: state.plate,
-    pattern: score.pattern,
-    width: Math.min(state.columns - 2, 84),
-    height,
-    colour,
-  }).map(line => ` ${line}`)
+/** The list, the score and the lifts stay; the staves take the height that is left. */
+function stackedBody(state: State, score: PlateScore<Food>, knowledge: Knowledge, room: number): string[] {
+  const { columns } = state
+  const facts = factLines(score, state, columns)
+  const list = foodLines(state, score, columns, knowledge.colour)
+  const lifts = liftLines(state, knowledge, columns)
+  const care = careOf(score, state, columns)
+  const held = facts.length + list.length + lifts.length + care.must.length
+  const spare = room - held - 2
+  // Cautions that are not grave give way to the staves where both don't fit.
+  const more = care.may.slice(0, Math.max(0, spare - STAVES_ROWS.least - 4))
+  const gap = spare - more.length > STAVES_ROWS.least + 2 ? [''] : []
+  const height = Math.min(STAVES_ROWS.most, spare - more.length - gap.length)
+  return [
+    ...facts,
+    ...chartLines(state, score, height, columns - 2, knowledge.colour),
+    ...list,
+    ...gap,
+    ...lifts,
+    ...care.must,
+    ...more,
+  ]
 }
 
-function factLines(score: PlateScore<Food>, state: State): string[] {
-  const parts = [
+/** Staves on the left, as large as the window; foods, lifts and cautions on the right. */
+function wideBody(state: State, score: PlateScore<Food>, knowledge: Knowledge, room: number): string[] {
+  const columns = state.columns - PANEL
+  const facts = factLines(score, state, state.columns)
+  const height = Math.min(STAVES_ROWS.mostWide, room - facts.length - 4)
+  const chart = ['', ...chartLines(state, score, height, columns - 2, knowledge.colour)]
+  const width = PANEL - 2
+  const { must, may } = careOf(score, state, width)
+  const panel = [
+    '',
+    ...foodLines(state, score, width, knowledge.colour),
+    '',
+    ...liftLines(state, knowledge, width),
+    '',
+    ...must,
+    '',
+    ...may,
+  ]
+  return [...facts, ...beside(chart, panel, columns + 1)]
+}
+
+function chartLines(
+  state: State,
+  score: PlateScore<Food>,
+  height: number,
+  width: number,
+  colour: boolean,
+): string[] {
+  const { staves, pattern } = score
+  if (staves === null) return []
+  if (state.spoken) return wrapLines(` ${stavesAsText(staves)}`, state.columns - 1, 1)
+  if (height < STAVES_ROWS.least) {
+    const figures = STAVES.map(
+      stave =>
+        `${STAVE_LABELS[stave]}${stave === score.limiting ? '*' : ''} ${Math.floor(staves[stave] + 1e-9)}`,
+    )
+    return wrapLines(` ${stavesSketch(staves)}  ${figures.join('  ')}`, state.columns - 1, 12).slice(
+      0,
+      Math.max(1, height + 2),
+    )
+  }
+  const drawing = drawStaves({ portions: state.plate, pattern, width: Math.min(width, 92), height, colour })
+  return drawing.map(line => ` ${line}`)
+}
+
+function factLines(score: PlateScore<Food>, state: State, columns: number): string[] {
+  const short = score.limiting === null ? '' : STAVE_NAMES[score.limiting]
+  const first = [
     STYLE.bold(diaasText(score)),
     ...(score.limiting === null
       ? []
-      : [
-          score.diaas! < 100
-            ? `short of ${STAVE_NAMES[score.limiting]}`
-            : `shortest ${STAVE_NAMES[score.limiting]}`,
-        ]),
-    ...(score.lift !== null && state.plate.length > 1 ? [`lift ${signed(score.lift)}`] : []),
+      : [score.diaas! < 100 ? `short of ${short}` : `no stave short; shortest ${short}`]),
+  ]
+  const lift = score.lift === null || state.plate.length < 2 ? 0 : Math.round(score.lift)
+  const second = [
+    ...(lift === 0 ? [] : [`lift ${signed(lift)}`]),
     `${score.adjustedProteinG.toFixed(0)} g adjusted protein`,
     kcal(score.kcal),
     `leucine ${score.leucineG.toFixed(1)} g`,
+    ...(columns < 72 ? [] : [`fibre ${score.fibreG.toFixed(0)} g`]),
   ]
-  return wrapLines(` ${parts.join(' · ')}`, state.columns - 1, 1)
+  const whole = ` ${[...first, ...second].join(' · ')}`
+  const lines = wrapLines(whole, columns - 1, 1)
+  return lines.length === 1
+    ? lines
+    : [first, second].flatMap(part => wrapLines(` ${part.join(' · ')}`, columns - 1, 1))
 }
 
-function foodLines(state: State, score: PlateScore<Food>, colour: boolean): string[] {
+function foodLines(state: State, score: PlateScore<Food>, columns: number, colour: boolean): string[] {
+  const wide = columns >= 76
   return score.items.map(({ food, grams: g, proteinG, diaasAlone }, i) => {
     const under = i === state.plateCursor
-    const sign = `${letterOf(i)} ${fillOf(i)}`
-    const marked = colour ? inFoodColour(i, sign) : sign
-    const right = `${padStart(grams(g), 7)}  ${padStart(`${proteinG.toFixed(1)} g protein`, 15)}  ${diaasAlone === null ? '' : `alone ${wholeScore(diaasAlone)}`}`
-    const room = Math.max(10, state.columns - 46)
+    const right = [
+      padStart(grams(g), 7),
+      padStart(wide ? `${proteinG.toFixed(1)} g protein` : `${proteinG.toFixed(0)} g prot.`, wide ? 15 : 10),
+      ...(wide ? [padEnd(diaasAlone === null ? '' : `alone ${wholeScore(diaasAlone)}`, 9)] : []),
+    ].join('  ')
+    const room = Math.max(10, Math.min(columns - 12 - right.length, 60))
     const name = clip(food.name, room)
-    return ` ${under ? '▸' : ' '} ${marked} ${padEnd(under ? STYLE.bold(name) : name, room)} ${right}`
+    return ` ${under ? '▸ ' : '  '}${foodSign(i, colour)} ${padEnd(under ? STYLE.bold(name) : name, room)} ${right}`.trimEnd()
   })
 }
 
-function liftLines(state: State, knowledge: Knowledge): string[] {
+/** Always as many lines as there may be lifts, so that nothing jumps while an amount is changed. */
+function liftLines(state: State, knowledge: Knowledge, columns: number): string[] {
   const options = liftsOf(state, knowledge)
-  if (options.length === 0) return []
+  if (options.length === 0)
+    return [STYLE.dim(clip(' Nothing would lift it much: no small change gives a point more.', columns - 1))]
   return options.map((option, i) => {
-    const amount = option.deltaG < 0 ? `${grams(-option.deltaG)} less` : `${grams(option.deltaG)} more`
     const there = state.plate.some(({ food }) => food.id === option.food.id)
-    const what = there ? `${amount} ${option.food.name}` : `${grams(option.deltaG)} ${option.food.name}`
-    const label = i === 0 ? ' would lift it: ' : '                '
-    return clip(
-      `${label}${i + 1} to ${wholeScore(option.diaas)}: ${what}${option.onShelf ? '' : ' (not on your shelf)'}`,
-      state.columns - 1,
-    )
+    const size = grams(Math.abs(option.deltaG))
+    const amount = option.deltaG < 0 ? `${size} less` : there ? `${size} more` : `add ${size}`
+    const where = option.onShelf ? '' : ' (to buy)'
+    const label = i === 0 ? 'lifts it ' : '         '
+    const start = ` ${STYLE.dim(label)}${STYLE.bold(String(i + 1))}  to ${wholeScore(option.diaas).padStart(3)}  `
+    return start + clip(`${amount} ${option.food.name}${where}`, Math.max(10, columns - 22))
   })
 }
 
-/** Allergens, and the one caution that weighs most; the card has them all. */
-function careLines(score: PlateScore<Food>, state: State): string[] {
+/** What must be read: allergens, and grave cautions in full; and what may be cut, where the window is small. */
+function careOf(score: PlateScore<Food>, state: State, columns: number): { must: string[]; may: string[] } {
   const foods = score.items.map(({ food }) => food)
   const allergens = [...new Set(foods.flatMap(food => food.allergens))].map(allergenName)
-  const [first, ...more] = cautionsFor(foods, { conditions: state.settings.conditions })
-  const lines = allergens.length === 0 ? [] : [` Allergens: ${allergens.join(', ')}.`]
-  if (first !== undefined)
-    lines.push(` ${first.text}${more.length === 0 ? '' : ` (${more.length} more on the card)`}`)
-  return lines.flatMap(line => wrapLines(line, state.columns - 1, 1)).map(STYLE.dim)
+  const cautions = cautionsFor(foods, { conditions: state.settings.conditions, portions: state.plate })
+  const grave = cautions.filter(({ weight }) => weight >= GRAVE)
+  const others = cautions.filter(({ weight }) => weight < GRAVE)
+  const lines = (text: string) => wrapLines(` ${text}`, columns - 1, 1)
+  return {
+    must: [
+      ...lines(`Allergens: ${allergens.length === 0 ? 'none of the listed ones' : allergens.join(', ')}.`),
+      ...grave.slice(0, 1).flatMap(({ text }) => lines(text)),
+    ],
+    may: [...grave.slice(1), ...others].flatMap(({ text }: Caution) => lines(text)).map(STYLE.dim),
+  }
 }
 
 function footOf(state: State): string[] {
-  if (state.prompt !== null) return promptLines(state)
-  if (state.asksServe) {
-    const { servings } = state.settings
-    return [
-      STYLE.bold(
-        clip(
-          ` Serve: take ${servings === 1 ? 'this plate' : `${servings} of these plates`} off the shelf? Enter or y: yes, any other key: no`,
-          state.columns - 1,
-        ),
-      ),
-    ]
-  }
+  if (!state.asksServe) return footLines(state, standingNote(state))
+  const { servings } = state.settings
+  const what = servings === 1 ? 'this plate' : `${servings} of these plates`
   return [
-    state.message === ''
-      ? STYLE.dim(clip(` ${STANDING_NOTE}`, state.columns - 1))
-      : ` ${clip(state.message, state.columns - 2)}`,
+    STYLE.bold(
+      clip(` Serve: take ${what} off the shelf? Enter or y: yes; any other key: no`, state.columns - 1),
+    ),
   ]
 }
 
-function keysOf(state: State): [string, string][] {
-  if (state.prompt !== null)
-    return [
-      ['Enter', 'take it'],
-      ['Esc', 'leave it'],
-    ]
+function keysOf(state: State): readonly KeyName[] {
+  if (state.prompt !== null) return PROMPT_KEYS
   if (state.asksServe)
     return [
       ['Enter', 'serve'],
@@ -157,9 +213,9 @@ function keysOf(state: State): [string, string][] {
     ]
   if (state.plate.length === 0)
     return [
-      ['Tab', 'shelf'],
       ['a', 'add a food'],
       ['Esc', 'bench'],
+      ['Tab', 'shelf'],
     ]
   return [
     ['←→', 'less, more'],
@@ -171,8 +227,19 @@ function keysOf(state: State): [string, string][] {
     ['s', 'serve'],
     ['c', 'card'],
     ['f', 'look'],
+    ['n', 'servings'],
     ['Tab', 'shelf'],
   ]
+}
+
+function emptyLines(state: State, knowledge: Knowledge): string[] {
+  return [
+    '',
+    '   The plate is empty.',
+    '',
+    '   Take a pairing from the bench (Esc), or press a to put a food on it.',
+    ...todayLines(state, knowledge),
+  ].map(line => clip(line, state.columns - 1))
 }
 
 /** What was served today. */

@@ -1,6 +1,7 @@
 import type { Food } from '../../foods/food.ts'
 import { scoreBasis } from '../../foods/score.ts'
-import { stavesOfPlate } from '../../nutrition/staves.ts'
+import { STAVE_LABELS, STAVES, type Staves } from '../../nutrition/amino-acids.ts'
+import { shortestStave, stavesOfPlate } from '../../nutrition/staves.ts'
 import { type ShelfRow, shelfRows } from '../rows.ts'
 import type { Knowledge, State } from '../state.ts'
 import { stavesSketch } from '../staves/draw-staves.ts'
@@ -8,7 +9,23 @@ import { STYLE } from '../style.ts'
 import { grams } from '../text/figures.ts'
 import { clip, padEnd, padStart } from '../text/lines.ts'
 import { widthOf } from '../text/width.ts'
-import { fitted, keyLine, promptLines, rule, topLine, windowOf } from './frame.ts'
+import { foodPanel } from './food-panel.ts'
+import {
+  beside,
+  bodyRows,
+  fitted,
+  footLines,
+  isWide,
+  type KeyName,
+  keyLines,
+  PROMPT_KEYS,
+  rule,
+  topLine,
+  windowOf,
+} from './frame.ts'
+
+/** Columns of the food under the cursor, beside a wide list, with the gap before it. */
+const PANEL = 60
 
 /** What is on hand; typing finds, and offers foods of the table after it. */
 export function shelfView(state: State, knowledge: Knowledge): string[] {
@@ -16,26 +33,44 @@ export function shelfView(state: State, knowledge: Knowledge): string[] {
   const cursor = Math.max(0, Math.min(state.cursor, rows.length - 1))
   const count = `${state.shelf.items.length} ${state.shelf.items.length === 1 ? 'food' : 'foods'}`
   const top = [
-    topLine(
-      state,
-      `${state.sample ? 'the sample shelf: a river survey boat’s galley' : 'your shelf'} · ${count}`,
-    ),
+    topLine(state, `${state.sample ? 'the sample shelf' : 'your shelf'} · ${count}`),
     ` > ${state.find}${state.prompt === null ? STYLE.reverse(' ') : ''}${state.find === '' ? STYLE.dim(' type to find a food, or to add one') : ''}`,
   ]
-  const foot = [...footOf(state), keyLine(state.columns, keysOf(state, rows[cursor]))]
-  const room = Math.max(1, state.rows - 1 - top.length - foot.length - 2)
-  const { shown, first } = windowOf(rows, cursor, room)
-  const body: string[] = []
+  const foot = [...footLines(state, standing(state)), ...keyLines(state, keysOf(state, rows[cursor]))]
+  const room = bodyRows(state, top, foot)
+  const panelOf = isWide(state) && !state.spoken ? (rows[cursor]?.food ?? null) : null
+  const columns = panelOf === null ? state.columns : state.columns - PANEL
+  const list = listLines(state, knowledge, rows, cursor, room, columns)
+  const body =
+    panelOf === null
+      ? list
+      : beside(list, ['', ...foodPanel(panelOf, state, knowledge, PANEL - 4)], columns + 2)
+  return fitted(state, top, body, foot)
+}
+
+function listLines(
+  state: State,
+  knowledge: Knowledge,
+  rows: readonly ShelfRow[],
+  cursor: number,
+  room: number,
+  columns: number,
+): string[] {
+  if (rows.length === 0) return ['', ...emptyLines(state).map(line => clip(line, columns - 1))]
+  // Days take a column only where some food has one.
+  const dated = state.shelf.items.some(({ useBy }) => useBy !== null)
+  const titles = new Set(rows.map(({ kind }) => kind)).size
+  const { shown, first } = windowOf(rows, cursor, Math.max(1, room - titles))
+  const lines: string[] = []
   let section = ''
   shown.forEach((row, i) => {
     const title =
       row.kind === 'here' ? hereTitle(state, rows, first + i) : 'in the table: Enter puts it on the shelf'
-    if (row.kind !== section) body.push(rule(title, state.columns))
+    if (row.kind !== section) lines.push(rule(title, columns))
     section = row.kind
-    body.push(rowLine(row, first + i === cursor, state, knowledge))
+    lines.push(rowLine(row, first + i === cursor, { columns, dated }, state, knowledge))
   })
-  if (rows.length === 0) body.push('', ...emptyLines(state).map(line => clip(line, state.columns - 1)))
-  return fitted(state, top, body, foot)
+  return lines
 }
 
 function hereTitle(state: State, rows: readonly ShelfRow[], at: number): string {
@@ -58,55 +93,52 @@ function emptyLines(state: State): string[] {
   ]
 }
 
-/** The message and the open line stand just above the keys. */
-function footOf(state: State): string[] {
-  if (state.prompt !== null) return promptLines(state)
-  if (state.message !== '') return [` ${clip(state.message, state.columns - 2)}`]
-  return state.sample
-    ? [
-        STYLE.dim(
-          clip(' This is a sample, kept with your first change. 0 starts an empty shelf.', state.columns - 1),
-        ),
-      ]
-    : ['']
+/** Said while nothing else is: what the sample is, or how much has been served of today. */
+function standing({ sample, columns }: State): string {
+  if (!sample) return ''
+  const long =
+    'A sample: the galley of a river survey boat. It is kept with your first change; 0 starts an empty shelf.'
+  return columns > long.length + 2 ? long : 'A sample, kept with your first change; 0 starts an empty shelf.'
 }
 
-function keysOf(state: State, row: ShelfRow | undefined): [string, string][] {
-  if (state.prompt !== null)
-    return [
-      ['Enter', 'take it'],
-      ['Esc', 'leave it'],
-    ]
-  const here: [string, string][] =
-    row?.kind === 'table'
-      ? [
-          ['Enter', 'add'],
-          ['=', 'look'],
-          ['Esc', 'clear'],
-        ]
-      : row === undefined
-        ? []
-        : [
-            ['Enter', 'amount'],
-            ['!', 'use up'],
-            ['.', 'hold back'],
-            ['#', 'take off'],
-            ['=', 'look'],
-            ['/', 'order'],
-            ['<', 'undo'],
-            ['@', 'use by'],
-          ]
-  const sample: [string, string][] = state.sample && state.find === '' ? [['0', 'empty']] : []
-  return [['Tab', 'bench'], ...sample, ...here]
+function keysOf(state: State, row: ShelfRow | undefined): readonly KeyName[] {
+  if (state.prompt !== null) return PROMPT_KEYS
+  const sample: KeyName[] = state.sample && state.find === '' ? [['0', 'empty shelf']] : []
+  const clear: KeyName[] = state.find === '' ? [] : [['Esc', 'clear']]
+  const rest: KeyName[] = [...clear, ['<', 'undo'], ['/', 'order'], ['+', 'food from a packet']]
+  if (row === undefined) return [['Tab', 'bench'], ...sample, ...rest]
+  if (row.kind === 'table') return [['Enter', 'add it'], ['=', 'look'], ...clear, ['Tab', 'bench']]
+  return [
+    ['Tab', 'bench'],
+    ['Enter', 'amount'],
+    ['!', 'use up'],
+    ['.', 'hold back'],
+    ['#', 'take off'],
+    ['@', 'use by'],
+    ['=', 'look'],
+    ...sample,
+    ...rest,
+  ]
 }
 
 const MARKS = { 'use-up': 'use up', 'hold-back': 'hold back', '': '' } as const
 
-function rowLine(row: ShelfRow, under: boolean, state: State, knowledge: Knowledge): string {
-  const { columns } = state
-  const wide = columns >= 84
+/** What all rows of a list share. */
+interface RowFrame {
+  columns: number
+  /** is there a column for use-by days? */
+  dated: boolean
+}
+
+function rowLine(
+  row: ShelfRow,
+  under: boolean,
+  { columns, dated }: RowFrame,
+  state: State,
+  knowledge: Knowledge,
+): string {
   const food = row.food
-  const sketch = food === null || state.spoken ? '' : sketchOf(food, state, knowledge)
+  const sketch = food === null ? '' : sketchOf(food, state, knowledge)
   const amount = row.kind === 'here' ? grams(row.item.grams) : ''
   const avoided = food === null ? [] : food.allergens.filter(id => state.settings.without.includes(id))
   // What the cook leaves out is never proposed, and is marked wherever it is found.
@@ -122,14 +154,15 @@ function rowLine(row: ShelfRow, under: boolean, state: State, knowledge: Knowled
   const right = [
     padEnd(mark, 9),
     padStart(amount, 7),
-    padEnd(days, wide ? 10 : 5),
+    ...(dated ? [padEnd(days, 5)] : []),
     ...(columns < 72 ? [] : [padStart(protein, 14)]),
     sketch,
   ].join(' ')
   const name = food?.name ?? (row.kind === 'here' ? `${row.item.food} (not in the table)` : '')
   const room = Math.max(8, columns - widthOf(right) - 5)
   const clipped = clip(name, room)
-  const filled = padEnd(under ? STYLE.bold(clipped) : withMarks(clipped, row.matched), room)
+  const matched = withMarks(clipped, row.matched)
+  const filled = padEnd(under ? STYLE.bold(matched) : matched, room)
   return `${under ? ' ▸ ' : '   '}${filled} ${right}`
 }
 
@@ -153,17 +186,24 @@ function daysText(useBy: string | null, today: string): string {
 
 const sketches = new WeakMap<Food, Map<string, string>>()
 
-function sketchOf(food: Food, { settings }: State, { table }: Knowledge): string {
+function sketchOf(food: Food, { settings, spoken }: State, { table }: Knowledge): string {
   let byPattern = sketches.get(food)
   if (byPattern === undefined) {
     byPattern = new Map()
     sketches.set(food, byPattern)
   }
-  let sketch = byPattern.get(settings.pattern)
+  const key = `${settings.pattern} ${spoken}`
+  let sketch = byPattern.get(key)
   if (sketch === undefined) {
     const staves = stavesOfPlate([{ food, grams: 100 }], scoreBasis(table, settings.pattern).pattern)
-    sketch = staves === null ? '         ' : stavesSketch(staves)
-    byPattern.set(settings.pattern, sketch)
+    sketch = staves === null ? ' '.repeat(STAVES.length) : spoken ? inWords(staves) : stavesSketch(staves)
+    byPattern.set(key, sketch)
   }
   return sketch
+}
+
+/** The shortest stave alone, for a list that is listened to. */
+function inWords(staves: Staves): string {
+  const shortest = shortestStave(staves)
+  return `shortest ${STAVE_LABELS[shortest]} ${Math.floor(staves[shortest])}`
 }
