@@ -60,7 +60,9 @@ export function bestProposals(problem: PairingProblem, admitted: Admitted, windo
   const forcedKins = new Set(forced.map(({ food }) => food.kin))
   // Where several are asked for, more than those are met, so that different ones are among them.
   const aim =
-    problem.pairings === 1 ? { enough: 1, slack: NEAR } : { enough: 5 * problem.pairings, slack: SLACK }
+    problem.pairings === 1
+      ? { enough: 1, slack: 0, growth: NEAR }
+      : { enough: 5 * problem.pairings, slack: SLACK, growth: SLACK }
   const found = new Search(space, aim).run()
   return differentProposals(found, problem.pairings, forcedKins)
 }

@@ -1,5 +1,6 @@
 import { STAVES } from '../nutrition/amino-acids.ts'
 import type { Candidate } from './candidate.ts'
+import type { Prices } from './price-bound.ts'
 import { borrowedTableau, optimise, pivot } from './simplex.ts'
 
 /** What the grams of a serving must keep to; null: no ceiling. */
@@ -16,10 +17,23 @@ export interface BestGrams {
   grams: Float64Array
 }
 
+/** What weighing a set came to: its best grams, if they are wanted, and the prices that show why not, or why no better. */
+export interface Weighed {
+  best: BestGrams | null
+  prices: Prices | null
+}
+
 /**
  * The exact inner step: the grams of a chosen set that make its least stave greatest, within the protein window and
- * each food's least and most grams. `null` where no grams keep to the window, or none reach `wanted` (a fraction):
- * the bound only falls on the way to the optimum, so that a set which can't reach it is given up early.
+ * each food's least and most grams. `null` where no grams keep to the window, or none reach `wanted` (a fraction).
+ */
+export function bestGrams(set: readonly Candidate[], window: Window, wanted = 0): BestGrams | null {
+  return weighed(set, window, wanted).best
+}
+
+/**
+ * The exact inner step with its prices. The bound only falls on the way to the optimum, so that a set which can't reach
+ * what is wanted is given up early; the prices at that point prove it.
  *
  * max min_i (sum_j g_j b_ij) / (sum_j g_j c_j) is a linear-fractional programme. Charnes and Cooper's substitution
  * y = t g with sum_j c_j y_j = 1 makes it linear (Naval Research Logistics Quarterly 1962;9:181,
@@ -27,7 +41,7 @@ export interface BestGrams {
  * programme: it has as few rows as there are foods, plus two, and a feasible basis that needs no search (one stave's
  * price 1, the score's bound high enough for every food). The grams are the prices of its rows.
  */
-export function bestGrams(set: readonly Candidate[], window: Window, wanted = 0): BestGrams | null {
+export function weighed(set: readonly Candidate[], window: Window, wanted: number): Weighed {
   const k = set.length
   const S = STAVES.length
   const ceilings = (window.energyAtMostKcal === null ? 0 : 1) + (window.massAtMostG === null ? 0 : 1)
@@ -102,17 +116,41 @@ export function bestGrams(set: readonly Candidate[], window: Window, wanted = 0)
       row = i
     }
   }
-  if (row === -1) return null
+  if (row === -1) return { best: null, prices: null }
   pivot(tableau, row, atBound)
-  if (!optimise(tableau, -wanted)) return null
+  const solved = optimise(tableau, -wanted)
 
+  const values = new Float64Array(atBound)
+  for (let i = 0; i < k + 2; i++) if (basis[i]! < atBound) values[basis[i]!] = cells[i * width + columns]!
+  const prices = named(values, atWindow, window)
   const costs = (k + 2) * width
   const t = cells[costs + atSlack + k]!
-  if (!(t > 1e-12)) return null
+  if (!solved || !(t > 1e-12)) return { best: null, prices }
   const grams = new Float64Array(k)
   for (let j = 0; j < k; j++) {
     const { leastG, mostG } = set[j]!
     grams[j] = Math.min(mostG, Math.max(leastG, leastG + cells[costs + atSlack + j]! / t))
   }
-  return { quality: -cells[costs + columns]!, grams }
+  return { best: { quality: -cells[costs + columns]!, grams }, prices }
+}
+
+/** The prices of staves, window and ceilings, out of a programme's values. */
+function named(values: Float64Array, atWindow: number, window: Window): Prices {
+  const { leastProteinG, mostProteinG, energyAtMostKcal, massAtMostG } = window
+  const low = values[atWindow]!
+  const high = values[atWindow + 1]!
+  let at = atWindow + 2
+  const energy = energyAtMostKcal === null ? 0 : values[at++]!
+  const mass = massAtMostG === null ? 0 : values[at]!
+  return {
+    staves: values.subarray(0, STAVES.length),
+    protein: low - high,
+    energy,
+    mass,
+    allowance:
+      high * mostProteinG -
+      low * leastProteinG +
+      energy * (energyAtMostKcal ?? 0) +
+      mass * (massAtMostG ?? 0),
+  }
 }

@@ -55,31 +55,49 @@ function ofTwo(a: Candidate, b: Candidate, window: Window): BestGrams | null {
   if (window.massAtMostG !== null) ceiling(1, 1, window.massAtMostG)
   if (!(least <= most * (1 + 1e-12))) return null
 
-  let ratio = least
-  let quality = qualityAt(a, b, least)
-  const tryRatio = (r: number) => {
-    const here = qualityAt(a, b, r)
-    if (here > quality) {
-      quality = here
-      ratio = r
-    }
-  }
-  tryRatio(most)
-  for (let i = 1; i < STAVES.length; i++) {
-    for (let j = 0; j < i; j++) {
-      const r = (a.staves[i]! - a.staves[j]!) / (b.staves[j]! - b.staves[i]!)
-      if (r > least && r < most) tryRatio(r)
-    }
-  }
+  const ratio = bestRatio(a, b, least, most)
   const g = Math.max(a.leastG, b.leastG / ratio, low / (a.protein + ratio * b.protein))
-  return { quality, grams: Float64Array.of(g, g * ratio) }
+  return {
+    quality: staveAt(a, b, lowestStave(a, b, ratio), ratio) / (a.crude + ratio * b.crude),
+    grams: Float64Array.of(g, g * ratio),
+  }
 }
 
-function qualityAt(a: Candidate, b: Candidate, ratio: number): number {
+/**
+ * The ratio of b to a whose shortest stave is longest. With the ratio a stave only grows or only falls. Where the
+ * shortest at the least ratio falls, or the shortest at the most grows, that end is the best; else it stands between,
+ * and where the two cross either they are the shortest or a third one takes the place of one of them.
+ */
+function bestRatio(a: Candidate, b: Candidate, least: number, most: number): number {
+  const grows = (i: number) => b.staves[i]! * a.crude > a.staves[i]! * b.crude
+  let growing = lowestStave(a, b, least)
+  if (!grows(growing)) return least
+  let falling = lowestStave(a, b, most)
+  if (grows(falling)) return most
+  for (;;) {
+    const ratio = (a.staves[growing]! - a.staves[falling]!) / (b.staves[falling]! - b.staves[growing]!)
+    const lowest = lowestStave(a, b, ratio)
+    const here = staveAt(a, b, growing, ratio)
+    // Where two cross falls with each step, so that none comes back.
+    if (staveAt(a, b, lowest, ratio) >= here - 1e-12 * Math.abs(here)) return ratio
+    if (grows(lowest)) growing = lowest
+    else falling = lowest
+  }
+}
+
+/** The shortest stave at a ratio; all stand over the same crude protein. */
+function lowestStave(a: Candidate, b: Candidate, ratio: number): number {
+  let lowest = 0
   let least = Number.POSITIVE_INFINITY
   for (let i = 0; i < STAVES.length; i++) {
-    const stave = a.staves[i]! + ratio * b.staves[i]!
-    if (stave < least) least = stave
+    const stave = staveAt(a, b, i, ratio)
+    if (stave < least) {
+      least = stave
+      lowest = i
+    }
   }
-  return least / (a.crude + ratio * b.crude)
+  return lowest
 }
+
+const staveAt = (a: Candidate, b: Candidate, i: number, ratio: number): number =>
+  a.staves[i]! + ratio * b.staves[i]!

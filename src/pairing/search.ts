@@ -1,7 +1,9 @@
 import { STAVES } from '../nutrition/amino-acids.ts'
 import type { Candidate } from './candidate.ts'
-import { bestGrams, type Window } from './grams.ts'
+import { type BestGrams, bestGrams, type Window, weighed } from './grams.ts'
 import { bestGramsOfFew } from './pair-grams.ts'
+import { type PricedFood, type Prices, priceBound, worthOf } from './price-bound.ts'
+import { proveBest } from './proof.ts'
 
 /** A set of foods with its best grams, as the search compares them. */
 export interface Proposal {
@@ -18,6 +20,8 @@ export interface Proposal {
 /** At most so many foods of one role stand in a pairing. */
 const ONE_ROLE_AT_MOST = 2
 /** Sets of each size that are grown further, sets that reach too little protein yet, and sets that are mended by swaps. */
+export const STATS = { lp: 0 }
+const PRICED = 4
 const GROWN = 16
 const GROWN_TOWARDS_PROTEIN = 12
 const MENDED = 6
@@ -33,10 +37,14 @@ export interface SearchSpace {
   window: Window
 }
 
-/** How far to search: `enough` proposals that reach 100 end it; proposals within `slack` of the best are wanted too. */
+/**
+ * How far to search: `enough` proposals that reach 100 end it; proposals within `slack` of the best (a fraction) are
+ * wanted too, and sets within `growth` of it are grown by further foods.
+ */
 export interface SearchAim {
   enough: number
   slack: number
+  growth: number
 }
 
 /** Is one proposal better than another? By truncated DIAAS, then fewer foods, then less energy. */
@@ -60,12 +68,14 @@ export class Search {
   private readonly aim: SearchAim
   /** what is known of each set that was looked at, by its key; null: no grams, or not worth weighing */
   private readonly seen = new Map<number | string, Proposal | null>()
+  private readonly proven = new Set<number | string>()
   private readonly proposals: Proposal[] = []
   private readonly place = new Map<Candidate, number>()
   /** per food: each stave of its own, as a fraction of the pattern */
   private readonly own: Float64Array[]
   private readonly forcedBound: Float64Array
   private best = 0
+  private slack = 0
   private reached = 0
 
   constructor(space: SearchSpace, aim: SearchAim) {
@@ -84,8 +94,10 @@ export class Search {
     const { forced, open, foodsAtMost } = this.space
     const free = foodsAtMost - forced.filter(({ takesPlace }) => takesPlace).length
     if (forced.length > 0) this.weigh([])
-    let seeds: number[][] = [[]]
+    let seeds: Seed[] = [{ chosen: [], prices: null }]
     for (let size = 1; size <= free && !this.complete(); size++) {
+      // What the last size reaches need not be grown.
+      this.slack = size < free ? Math.max(this.aim.slack, this.aim.growth) : this.aim.slack
       const lacking: number[][] = []
       for (const { set, reach } of this.grown(seeds)) {
         if (reach < this.wanted()) break
@@ -93,9 +105,13 @@ export class Search {
       }
       // Pairs are grown from every single food, reachable or not: two that fail alone may do together.
       seeds =
-        size === 1 ? open.map((_, i) => [i]) : [...this.bestSeeds(size), ...this.towardsProtein(lacking)]
+        size === 1
+          ? open.map((_, i) => ({ chosen: [i], prices: null }))
+          : [...this.bestSeeds(size), ...this.towardsProtein(lacking)]
     }
+    this.slack = this.aim.slack
     if (!this.complete()) this.mend()
+    if (!this.complete() && free > 0) this.prove(free)
     return this.proposals.sort(comparator)
   }
 
@@ -104,19 +120,28 @@ export class Search {
     return this.reached >= this.aim.enough
   }
 
-  /** Each seed with each food that is left, once, those with the highest bound first; hopeless ones are left out. */
-  private grown(seeds: readonly number[][]): Bounded[] {
+  /**
+   * Each seed with each food that is left, once, those that could reach most first; hopeless ones, by what each stave
+   * could be and by the prices of the seed, are left out.
+   */
+  private grown(seeds: readonly Seed[]): Bounded[] {
     const sets: Bounded[] = []
     const met = new Set<number | string>()
     const wanted = this.wanted()
-    for (const seed of seeds) {
-      const bound = this.boundOf(seed)
+    for (const { chosen, prices } of seeds) {
+      const bound = this.boundOf(chosen)
+      const priced = prices === null ? null : this.pricedSet(chosen, prices)
       // From single foods each pair comes twice: the second food is then the later one.
-      for (let food = seed.length === 1 ? seed[0]! + 1 : 0; food < this.own.length; food++) {
-        const reach = leastOf(bound, this.own[food]!)
-        if (reach < wanted || seed.includes(food)) continue
-        const set = seed.length < 2 ? [...seed, food] : [...seed, food].sort((a, b) => a - b)
-        if (seed.length > 1) {
+      for (let food = chosen.length === 1 ? chosen[0]! + 1 : 0; food < this.own.length; food++) {
+        let reach = leastOf(bound, this.own[food]!)
+        if (reach < wanted || chosen.includes(food)) continue
+        if (priced !== null) {
+          priced[chosen.length] = pricedFood(this.space.open[food]!, prices!)
+          reach = Math.min(reach, priceBound(priced, prices!.allowance, wanted))
+          if (reach < wanted) continue
+        }
+        const set = chosen.length < 2 ? [...chosen, food] : [...chosen, food].sort((a, b) => a - b)
+        if (chosen.length > 1) {
           const key = keyOf(set)
           if (met.has(key)) continue
           met.add(key)
@@ -127,8 +152,15 @@ export class Search {
     return sets.sort((a, b) => b.reach - a.reach)
   }
 
+  /** A set at some prices, with the forced foods behind and room for one food more between. */
+  private pricedSet(chosen: readonly number[], prices: Prices): PricedFood[] {
+    const { forced, open } = this.space
+    const foods = chosen.map(i => pricedFood(open[i]!, prices))
+    return [...foods, NOTHING, ...forced.map(food => pricedFood(food, prices))]
+  }
+
   /** The best sets of a size and, so that no short stave is forgotten, the best for each food. */
-  private bestSeeds(size: number): number[][] {
+  private bestSeeds(size: number): Seed[] {
     const ofSize = this.proposals
       .filter(({ set }) => set.length === size + this.space.forced.length)
       .sort(comparator)
@@ -138,17 +170,18 @@ export class Search {
       if (proposal.set.some(food => !met.has(food))) seeds.add(proposal)
       for (const food of proposal.set) met.add(food)
     }
-    return [...seeds].map(proposal => this.chosenOf(proposal))
+    return [...seeds].map(proposal => ({ chosen: this.chosenOf(proposal), prices: this.pricesOf(proposal) }))
   }
 
   /** Of the sets without feasible grams, those that can bring most protein: another food may make them reach it. */
-  private towardsProtein(lacking: readonly number[][]): number[][] {
+  private towardsProtein(lacking: readonly number[][]): Seed[] {
     const reach = (set: readonly number[]) =>
       set.reduce((sum, i) => sum + this.space.open[i]!.protein * this.space.open[i]!.mostG, 0)
     return lacking
       .filter(set => reach(set) < this.space.window.leastProteinG)
       .sort((a, b) => reach(b) - reach(a))
       .slice(0, GROWN_TOWARDS_PROTEIN)
+      .map(chosen => ({ chosen, prices: null }))
   }
 
   /** Local search: swaps, additions and removals of one food on the best sets, until none of them helps. */
@@ -165,12 +198,48 @@ export class Search {
         const chosen = this.chosenOf(proposal)
         const rests = chosen.map(out => chosen.filter(i => i !== out))
         for (const rest of rests) if (rest.length > 0 && this.fits(rest)) this.weigh(rest)
-        for (const { set, reach } of this.grown([...rests, chosen])) {
+        const prices = this.pricesOf(proposal)
+        for (const { set, reach } of this.grown([...rests, chosen].map(seed => ({ chosen: seed, prices })))) {
           if (reach < this.wanted()) break
           this.weigh(set)
         }
       }
     }
+  }
+
+  /** Weighs what might still be better than the best, until nothing can be. */
+  private prove(free: number): void {
+    const { forced, open, window } = this.space
+    const top = this.proposals.sort(comparator).slice(0, PRICED)
+    proveBest(
+      {
+        forced,
+        open,
+        free,
+        wanted: () => this.best + SAME,
+        mayJoin: (chosen, food) => this.fits([...chosen, food]),
+        weigh: chosen => {
+          const key = keyOf(chosen)
+          if (this.seen.has(key) && this.seen.get(key) !== null) return null
+          if (this.proven.has(key)) return null
+          this.proven.add(key)
+          STATS.lp++
+          const set = [...forced, ...chosen.map(i => open[i]!)]
+          const { best, prices } = weighed(set, window, this.best + SAME)
+          if (best !== null && best.quality > this.best + SAME) {
+            const p = asProposal(set, best)
+            this.seen.set(key, p)
+            this.keep(p)
+          }
+          return prices
+        },
+      },
+      top.map(proposal => this.pricesOf(proposal)).filter(prices => prices !== null),
+    )
+  }
+
+  private pricesOf({ set }: Proposal): Prices | null {
+    return weighed(set, this.space.window, 0).prices
   }
 
   private chosenOf(proposal: Proposal): number[] {
@@ -185,18 +254,20 @@ export class Search {
     const set = [...this.space.forced, ...chosen.map(i => this.space.open[i]!)]
     const proposal = proposalOf(set, this.space.window, this.wanted())
     this.seen.set(key, proposal)
-    if (proposal !== null) {
-      this.proposals.push(proposal)
-      this.best = Math.max(this.best, Math.min(1, proposal.quality))
-      if (proposal.quality >= 1) this.reached++
-    }
+    if (proposal !== null) this.keep(proposal)
     return proposal
+  }
+
+  private keep(proposal: Proposal): void {
+    this.proposals.push(proposal)
+    this.best = Math.max(this.best, Math.min(1, proposal.quality))
+    if (proposal.quality >= 1) this.reached++
   }
 
   /** What a set must reach to be worth weighing, a fraction: 100 %, once nothing needs to be grown any more. */
   private wanted(): number {
     if (this.complete()) return 1 - SAME
-    return this.best - this.aim.slack - SAME
+    return this.best - this.slack - SAME
   }
 
   /** The most that each stave of a set could be, whatever the grams: that of its food with most of it. */
@@ -230,6 +301,21 @@ export class Search {
     return places <= foodsAtMost
   }
 }
+
+/** A set to be grown by one food, and prices that bound what may come of it. */
+interface Seed {
+  chosen: readonly number[]
+  prices: Prices | null
+}
+
+const NOTHING: PricedFood = { worth: 0, crude: 0, leastG: 0, mostG: 0 }
+
+const pricedFood = (food: Candidate, prices: Prices): PricedFood => ({
+  worth: worthOf(food, prices),
+  crude: food.crude,
+  leastG: food.leastG,
+  mostG: food.mostG,
+})
 
 const ownStaves = ({ staves, crude }: Candidate): Float64Array =>
   staves.map(stave => (crude > 0 ? stave / crude : 0))
@@ -275,6 +361,10 @@ export function proposalOf(set: readonly Candidate[], window: Window, wanted = 0
   if (least > window.mostProteinG || most < window.leastProteinG) return null
   const best = plain ? bestGramsOfFew(set, window) : bestGrams(set, window, wanted)
   if (best === null || best.quality < wanted) return null
+  return asProposal(set, best)
+}
+
+function asProposal(set: readonly Candidate[], best: BestGrams): Proposal {
   let kcal = 0
   for (let j = 0; j < set.length; j++) kcal += set[j]!.kcal * best.grams[j]!
   return {
