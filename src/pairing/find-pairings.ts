@@ -12,10 +12,11 @@ import { whyOf } from './reasons.ts'
 import { better, type Proposal, Search } from './search.ts'
 import { thriftyGrams } from './thrift.ts'
 
-/** Further pairings may score so much less than the best (a fraction of DIAAS). */
-const SLACK = 0.12
-/** Where one is asked for, sets so near the best (a fraction) are still worth growing. */
-const NEAR = 0.06
+/** Where several pairings are asked for, more than those are met, so that different ones are among them. */
+const SEVERAL = { slack: 0.12, growth: 0.12, seeds: 16 }
+const ONE = { slack: 0, growth: 0.02, seeds: 4 }
+/** Proposals that reach 100, for each pairing that is asked for, before the search ends. */
+const CHOICE = 5
 /** Protein may be over its target by this share. */
 const WINDOW_SHARE = 0.05
 
@@ -58,11 +59,8 @@ export function bestProposals(problem: PairingProblem, admitted: Admitted, windo
   const { forced, open } = admitted
   const space = { forced, open, foodsAtMost: problem.foodsAtMost, window }
   const forcedKins = new Set(forced.map(({ food }) => food.kin))
-  // Where several are asked for, more than those are met, so that different ones are among them.
   const aim =
-    problem.pairings === 1
-      ? { enough: 1, slack: 0, growth: NEAR }
-      : { enough: 5 * problem.pairings, slack: SLACK, growth: SLACK }
+    problem.pairings === 1 ? { ...ONE, enough: 1 } : { ...SEVERAL, enough: CHOICE * problem.pairings }
   const found = new Search(space, aim).run()
   return differentProposals(found, problem.pairings, forcedKins)
 }

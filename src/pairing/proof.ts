@@ -27,7 +27,7 @@ const STEPS_AT_MOST = 60_000
  * Source: branch and bound, Econometrica 1960;28:497, doi:10.2307/1910129.
  */
 export function proveBest(space: ProofSpace, prices: readonly Prices[]): boolean {
-  return new Proof(space, prices).run()
+  return space.free <= 0 || new Proof(space, prices).run()
 }
 
 /** What prices say of each set of the foods in order, against what is wanted now. */

@@ -4,6 +4,7 @@ import { type BestGrams, bestGrams, type Window, weighed } from './grams.ts'
 import { bestGramsOfFew } from './pair-grams.ts'
 import { type PricedFood, type Prices, priceBound, worthOf } from './price-bound.ts'
 import { proveBest } from './proof.ts'
+import { leastOf, ownStaves, raise } from './stave-bound.ts'
 
 /** A set of foods with its best grams, as the search compares them. */
 export interface Proposal {
@@ -19,11 +20,8 @@ export interface Proposal {
 
 /** At most so many foods of one role stand in a pairing. */
 const ONE_ROLE_AT_MOST = 2
-/** Sets of each size that are grown further, sets that reach too little protein yet, and sets that are mended by swaps. */
-export const STATS = { lp: 0 }
+/** Proposals whose prices a proof starts from, and proposals that are mended by swaps. */
 const PRICED = 4
-const GROWN = 16
-const GROWN_TOWARDS_PROTEIN = 12
 const MENDED = 6
 const ROUNDS_OF_SWAPS = 5
 /** Scores nearer than this are one score (DIAAS as a fraction). */
@@ -37,14 +35,16 @@ export interface SearchSpace {
   window: Window
 }
 
-/**
- * How far to search: `enough` proposals that reach 100 end it; proposals within `slack` of the best (a fraction) are
- * wanted too, and sets within `growth` of it are grown by further foods.
- */
+/** How far to search. */
 export interface SearchAim {
+  /** so many proposals that reach 100 end it */
   enough: number
+  /** proposals within this of the best are wanted too (a fraction of DIAAS) */
   slack: number
+  /** sets within this of the best are grown by further foods (a fraction) */
   growth: number
+  /** the best sets of each size that are grown, and as many of those that lack only protein yet */
+  seeds: number
 }
 
 /** Is one proposal better than another? By truncated DIAAS, then fewer foods, then less energy. */
@@ -60,15 +60,15 @@ const comparator = (a: Proposal, b: Proposal): number => (better(a, b) ? -1 : be
 
 /**
  * Proposals for a space, the best first: greedy construction from every single food and every pair, growing the best
- * sets (and those that lack only protein) by each food that is left, then local search by swaps until none helps. A set
- * whose foods could not reach what is known already, however they are weighed, is not weighed at all.
+ * sets (and those that lack only protein) by each food that is left, then a proof that no better set was overlooked, and
+ * local search by swaps until none helps. A set whose foods could not reach what is known already, however they are
+ * weighed, is not weighed at all.
  */
 export class Search {
   private readonly space: SearchSpace
   private readonly aim: SearchAim
   /** what is known of each set that was looked at, by its key; null: no grams, or not worth weighing */
   private readonly seen = new Map<number | string, Proposal | null>()
-  private readonly proven = new Set<number | string>()
   private readonly proposals: Proposal[] = []
   private readonly place = new Map<Candidate, number>()
   /** per food: each stave of its own, as a fraction of the pattern */
@@ -110,8 +110,11 @@ export class Search {
           : [...this.bestSeeds(size), ...this.towardsProtein(lacking)]
     }
     this.slack = this.aim.slack
-    if (!this.complete()) this.mend()
-    if (!this.complete() && free > 0) this.prove(free)
+    if (!this.complete()) {
+      const proven = this.prove(free)
+      // Where the best is certain, swaps find only what comes close to it.
+      if (!proven || this.slack > 0) this.mend()
+    }
     return this.proposals.sort(comparator)
   }
 
@@ -164,7 +167,7 @@ export class Search {
     const ofSize = this.proposals
       .filter(({ set }) => set.length === size + this.space.forced.length)
       .sort(comparator)
-    const seeds = new Set(ofSize.slice(0, GROWN))
+    const seeds = new Set(ofSize.slice(0, this.aim.seeds))
     const met = new Set<Candidate>()
     for (const proposal of ofSize) {
       if (proposal.set.some(food => !met.has(food))) seeds.add(proposal)
@@ -180,7 +183,7 @@ export class Search {
     return lacking
       .filter(set => reach(set) < this.space.window.leastProteinG)
       .sort((a, b) => reach(b) - reach(a))
-      .slice(0, GROWN_TOWARDS_PROTEIN)
+      .slice(0, this.aim.seeds)
       .map(chosen => ({ chosen, prices: null }))
   }
 
@@ -207,11 +210,12 @@ export class Search {
     }
   }
 
-  /** Weighs what might still be better than the best, until nothing can be. */
-  private prove(free: number): void {
+  /** Weighs what might still be better than the best, until nothing can be; false where that takes too long. */
+  private prove(free: number): boolean {
     const { forced, open, window } = this.space
-    const top = this.proposals.sort(comparator).slice(0, PRICED)
-    proveBest(
+    const known = [...this.proposals].sort(comparator).slice(0, PRICED)
+    const met = new Set<number | string>()
+    return proveBest(
       {
         forced,
         open,
@@ -220,26 +224,28 @@ export class Search {
         mayJoin: (chosen, food) => this.fits([...chosen, food]),
         weigh: chosen => {
           const key = keyOf(chosen)
-          if (this.seen.has(key) && this.seen.get(key) !== null) return null
-          if (this.proven.has(key)) return null
-          this.proven.add(key)
-          STATS.lp++
-          const set = [...forced, ...chosen.map(i => open[i]!)]
+          if (met.has(key) || this.seen.get(key)) return null
+          met.add(key)
+          const set = this.setOf(chosen)
           const { best, prices } = weighed(set, window, this.best + SAME)
           if (best !== null && best.quality > this.best + SAME) {
-            const p = asProposal(set, best)
-            this.seen.set(key, p)
-            this.keep(p)
+            const proposal = proposalFrom(set, best)
+            this.seen.set(key, proposal)
+            this.keep(proposal)
           }
           return prices
         },
       },
-      top.map(proposal => this.pricesOf(proposal)).filter(prices => prices !== null),
+      known.flatMap(proposal => this.pricesOf(proposal) ?? []),
     )
   }
 
   private pricesOf({ set }: Proposal): Prices | null {
     return weighed(set, this.space.window, 0).prices
+  }
+
+  private setOf(chosen: readonly number[]): Candidate[] {
+    return [...this.space.forced, ...chosen.map(i => this.space.open[i]!)]
   }
 
   private chosenOf(proposal: Proposal): number[] {
@@ -251,8 +257,7 @@ export class Search {
     const key = keyOf(chosen)
     const known = this.seen.get(key)
     if (known !== undefined) return known
-    const set = [...this.space.forced, ...chosen.map(i => this.space.open[i]!)]
-    const proposal = proposalOf(set, this.space.window, this.wanted())
+    const proposal = proposalOf(this.setOf(chosen), this.space.window, this.wanted())
     this.seen.set(key, proposal)
     if (proposal !== null) this.keep(proposal)
     return proposal
@@ -317,13 +322,6 @@ const pricedFood = (food: Candidate, prices: Prices): PricedFood => ({
   mostG: food.mostG,
 })
 
-const ownStaves = ({ staves, crude }: Candidate): Float64Array =>
-  staves.map(stave => (crude > 0 ? stave / crude : 0))
-
-function raise(bound: Float64Array, own: Float64Array): void {
-  for (let i = 0; i < bound.length; i++) if (own[i]! > bound[i]!) bound[i] = own[i]!
-}
-
 /** A set of foods by their places, and what its shortest stave could be at the most. */
 interface Bounded {
   set: number[]
@@ -336,16 +334,6 @@ function keyOf(set: readonly number[]): number | string {
   let key = 0
   for (const i of set) key = key * 1024 + i + 1
   return key
-}
-
-/** The shortest stave of a bound, raised by one more food. */
-function leastOf(bound: Float64Array, own: Float64Array): number {
-  let least = Number.POSITIVE_INFINITY
-  for (let i = 0; i < bound.length; i++) {
-    const stave = Math.max(bound[i]!, own[i]!)
-    if (stave < least) least = stave
-  }
-  return least
 }
 
 /** A set with its exact best grams; null where none keep to the window, or reach what is wanted (a fraction). */
@@ -361,10 +349,10 @@ export function proposalOf(set: readonly Candidate[], window: Window, wanted = 0
   if (least > window.mostProteinG || most < window.leastProteinG) return null
   const best = plain ? bestGramsOfFew(set, window) : bestGrams(set, window, wanted)
   if (best === null || best.quality < wanted) return null
-  return asProposal(set, best)
+  return proposalFrom(set, best)
 }
 
-function asProposal(set: readonly Candidate[], best: BestGrams): Proposal {
+function proposalFrom(set: readonly Candidate[], best: BestGrams): Proposal {
   let kcal = 0
   for (let j = 0; j < set.length; j++) kcal += set[j]!.kcal * best.grams[j]!
   return {
