@@ -2,21 +2,24 @@ import type { Food } from '../foods/food.ts'
 import { scorePlate } from '../nutrition/plate-score.ts'
 import type { Portion } from '../nutrition/protein-source.ts'
 import { type Admitted, admit } from './admit.ts'
+import type { Candidate } from './candidate.ts'
 import { differentProposals } from './different.ts'
+import { byServing, type Finished, finished } from './finish.ts'
 import type { Window } from './grams.ts'
 import { liftContext, nextLift } from './lift.ts'
 import { nearestPlate, type Reach } from './nearest.ts'
 import { practicalGrams } from './practical.ts'
 import type { Pairing, PairingAnswer, PairingProblem } from './problem.ts'
 import { whyOf } from './reasons.ts'
-import { better, type Proposal, Search } from './search.ts'
-import { thriftyGrams } from './thrift.ts'
+import { type Proposal, Search } from './search.ts'
 
 /** Where several pairings are asked for, more than those are met, so that different ones are among them. */
 const SEVERAL = { slack: 0.12, growth: 0.12, seeds: 16 }
 const ONE = { slack: 0, growth: 0.02, seeds: 4 }
 /** Proposals that reach 100, for each pairing that is asked for, before the search ends. */
 const CHOICE = 5
+/** So many of the best proposals are put in order by their practical grams. */
+const FRONT = 12
 /** Protein may be over its target by this share. */
 const WINDOW_SHARE = 0.05
 
@@ -32,17 +35,36 @@ export function findPairings(problem: PairingProblem): PairingAnswer {
   if (problem.shelf.length === 0) return unanswered('The shelf is empty; put foods on it first.')
   if (admitted.forced.length + admitted.open.length === 0) return unanswered(nothingOpen(admitted))
   const window = windowOf(problem)
-  const proposals = bestProposals(problem, admitted, window)
-  if (proposals.length === 0) return nearest(problem, admitted, window)
+  const found = searched(problem, admitted, window)
+  if (found.length === 0) return nearest(problem, admitted, window)
   return {
     reached: true,
-    pairings: proposals
-      .map(proposal => practical(proposal, window))
-      .sort((a, b) => (better(a, b) ? -1 : better(b, a) ? 1 : 0))
-      .map(proposal => pairingOf(proposal, problem)),
+    pairings: served(found, problem, admitted, window).map(proposal => pairingOf(proposal, problem)),
     reason: null,
   }
 }
+
+/** As many different proposals as are asked for, in practical grams, the best first. */
+function served(
+  found: readonly Proposal[],
+  { pairings }: PairingProblem,
+  { forced }: Admitted,
+  window: Window,
+): Proposal[] {
+  const done = new Map<Proposal, Finished>()
+  const finish = (proposal: Proposal): Finished => {
+    const known = done.get(proposal) ?? finished(proposal, window)
+    done.set(proposal, known)
+    done.set(known, known)
+    return known
+  }
+  // What rounding to steps costs differs from set to set, so that the front is put in order anew.
+  const front = found.slice(0, FRONT).map(finish).sort(byServing)
+  const chosen = differentProposals([...front, ...found.slice(FRONT)], pairings, kinsOf(forced), finish)
+  return chosen.map(finish).sort(byServing)
+}
+
+const kinsOf = (foods: readonly Candidate[]): Set<string> => new Set(foods.map(({ food }) => food.kin))
 
 /** The protein window and ceilings of a problem. */
 export function windowOf(problem: PairingProblem): Window {
@@ -56,26 +78,16 @@ export function windowOf(problem: PairingProblem): Window {
 
 /** The different proposals with their exact (continuous) grams, the best first; empty where none is feasible. */
 export function bestProposals(problem: PairingProblem, admitted: Admitted, window: Window): Proposal[] {
-  const { forced, open } = admitted
-  const space = { forced, open, foodsAtMost: problem.foodsAtMost, window }
-  const forcedKins = new Set(forced.map(({ food }) => food.kin))
+  const { forced } = admitted
+  return differentProposals(searched(problem, admitted, window), problem.pairings, kinsOf(forced))
+}
+
+/** All proposals that the search met, the best first. */
+function searched(problem: PairingProblem, { forced, open }: Admitted, window: Window): Proposal[] {
   const aim =
     problem.pairings === 1 ? { ...ONE, enough: 1 } : { ...SEVERAL, enough: CHOICE * problem.pairings }
-  const found = new Search(space, aim).run()
-  return differentProposals(found, problem.pairings, forcedKins)
+  return new Search({ forced, open, foodsAtMost: problem.foodsAtMost, window }, aim).run()
 }
-
-/** Exact grams made practical: first the thriftiest that keep the score, then steps that a cook can weigh. */
-function practical(proposal: Proposal, window: Window): Proposal {
-  const { set, quality } = proposal
-  const kept = Math.min(1, quality) - 1e-9
-  const exact = thriftyGrams(set, window, kept) ?? proposal.grams
-  const rounded = practicalGrams(set, exact, window)
-  const grams = Float64Array.from(rounded.grams)
-  const kcal = set.reduce((sum, food, j) => sum + food.kcal * grams[j]!, 0)
-  return { ...proposal, grams, quality: rounded.quality, kcal }
-}
-
 function pairingOf(proposal: Proposal, problem: PairingProblem): Pairing {
   const portions = proposal.set
     .map(({ food }, j): Portion<Food> => ({ food, grams: proposal.grams[j]! }))
@@ -109,7 +121,7 @@ function nearest(problem: PairingProblem, { forced, open }: Admitted, window: Wi
     0,
   )
   const slack = { ...window, leastProteinG: proteinG * 0.97, mostProteinG: proteinG * 1.001 }
-  const rounded = practicalGrams(reach.proposal.set, reach.proposal.grams, slack)
+  const rounded = practicalGrams(reach.proposal.set, [reach.proposal.grams], slack)
   const proposal = { ...reach.proposal, grams: Float64Array.from(rounded.grams) }
   return { reached: false, pairings: [pairingOf(proposal, problem)], reason }
 }

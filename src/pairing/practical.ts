@@ -4,7 +4,9 @@ import type { Window } from './grams.ts'
 /** Steps to either side of the exact grams that are tried for each food, fewest first. */
 const REACHES = [1, 2, 4]
 /** The plates that are tried at most for one reach. */
-const TRIED_AT_MOST = 20_000
+const TRIED_AT_MOST = 8000
+/** Practical grams that lose no more than this of what the exact ones reach (a fraction) need no wider look. */
+const LOST = 0.0005
 
 /** Grams that a cook weighs: multiples of the food's step, or all that there is. */
 export interface PracticalGrams {
@@ -15,30 +17,26 @@ export interface PracticalGrams {
 }
 
 /**
- * The practical grams nearest to the exact ones that keep to the window with the best truncated DIAAS (then more of
- * what is to be used up, then less energy). Where none keep to it, those whose protein misses the window by least.
+ * The practical grams around exact ones (one choice of them or several) that keep to the window with the best truncated
+ * DIAAS, then more of what is to be used up, then less energy; the fewer steps away the sooner they are taken. Where
+ * none keep to the window, those whose protein misses it by least.
  */
 export function practicalGrams(
   set: readonly Candidate[],
-  exact: ArrayLike<number>,
+  exact: readonly ArrayLike<number>[],
   window: Window,
 ): PracticalGrams {
-  let best: PracticalGrams | null = null
+  const enough = Math.max(...exact.map(grams => Math.min(1, qualityOf(set, grams)))) - LOST
+  let best: Ranked | null = null
   for (const reach of REACHES) {
-    const choices = set.map((food, j) => stepsAround(food, exact[j]!, reach))
-    const plates = choices.reduce((product, steps) => product * steps.length, 1)
-    if (plates > TRIED_AT_MOST) break
-    best = bestOf(set, choices, window)
-    if (best.keeps) return best
+    for (const grams of exact) {
+      const choices = set.map((food, j) => stepsAround(food, grams[j]!, reach))
+      const plates = choices.reduce((product, steps) => product * steps.length, 1)
+      if (best === null || plates <= TRIED_AT_MOST) best = bestOf(set, choices, window, best)
+      if (best.keeps && Math.min(1, best.quality) >= enough) return best
+    }
   }
-  return (
-    best ??
-    bestOf(
-      set,
-      set.map((food, j) => stepsAround(food, exact[j]!, 1)),
-      window,
-    )
-  )
+  return best!
 }
 
 /** Multiples of the food's step around the exact grams, within its least and most; and the most itself. */
@@ -58,9 +56,19 @@ function stepsAround({ food, leastG, mostG }: Candidate, exact: number, reach: n
   return [...steps].sort((a, b) => a - b)
 }
 
-function bestOf(set: readonly Candidate[], choices: readonly number[][], window: Window): PracticalGrams {
-  let best: PracticalGrams | null = null
-  let bestRank: number[] = []
+/** Practical grams with what they are ranked by, the first figure first, more is better. */
+interface Ranked extends PracticalGrams {
+  rank: number[]
+}
+
+/** The best of all plates that the choices make, and of the best one known. */
+function bestOf(
+  set: readonly Candidate[],
+  choices: readonly number[][],
+  window: Window,
+  known: Ranked | null,
+): Ranked {
+  let best = known
   const grams = new Array<number>(set.length).fill(0)
   const visit = (j: number): void => {
     if (j < set.length) {
@@ -72,23 +80,24 @@ function bestOf(set: readonly Candidate[], choices: readonly number[][], window:
     }
     const protein = totalOf(set, grams, 'protein')
     const kcal = totalOf(set, grams, 'kcal')
+    const { leastProteinG, mostProteinG, energyAtMostKcal, massAtMostG } = window
+    const miss = aboveRounding(Math.max(leastProteinG - protein, protein - mostProteinG))
+    const over =
+      aboveRounding(energyAtMostKcal === null ? 0 : kcal - energyAtMostKcal) +
+      aboveRounding(massAtMostG === null ? 0 : grams.reduce((sum, g) => sum + g, 0) - massAtMostG)
+    if (best?.keeps && miss + over > 0) return
     const quality = qualityOf(set, grams)
-    const miss = Math.max(0, window.leastProteinG - protein, protein - window.mostProteinG)
-    const over = Math.max(
-      0,
-      window.energyAtMostKcal === null ? 0 : kcal - window.energyAtMostKcal,
-      window.massAtMostG === null ? 0 : grams.reduce((sum, g) => sum + g, 0) - window.massAtMostG,
-    )
     const usedUp = set.reduce((sum, food, i) => sum + (food.useUp ? grams[i]! : 0), 0)
-    const rank = [over > 1e-9 ? -over : 0, miss > 1e-9 ? -miss : 0, Math.min(1, quality), usedUp, -kcal]
-    if (best === null || isHigher(rank, bestRank)) {
-      best = { grams: [...grams], quality, keeps: over <= 1e-9 && miss <= 1e-9 }
-      bestRank = rank
+    const rank = [-over, -miss, Math.min(1, quality), usedUp, -kcal]
+    if (best === null || isHigher(rank, best.rank)) {
+      best = { grams: [...grams], quality, keeps: over + miss === 0, rank }
     }
   }
   visit(0)
   return best!
 }
+
+const aboveRounding = (excess: number): number => (excess > 1e-9 ? excess : 0)
 
 function isHigher(a: readonly number[], b: readonly number[]): boolean {
   for (let i = 0; i < a.length; i++) {

@@ -47,13 +47,21 @@ export interface SearchAim {
   seeds: number
 }
 
-/** Is one proposal better than another? By truncated DIAAS, then fewer foods, then less energy. */
+/** Is one proposal better? By truncated DIAAS, then more of what is to be used up, fewer foods, less energy. */
 export function better(a: Proposal, b: Proposal): boolean {
   const qualityA = Math.min(1, a.quality)
   const qualityB = Math.min(1, b.quality)
   if (Math.abs(qualityA - qualityB) > SAME) return qualityA > qualityB
+  const usedMore = usedUpG(a) - usedUpG(b)
+  if (Math.abs(usedMore) > 1e-6) return usedMore > 0
   if (a.places !== b.places) return a.places < b.places
   return a.kcal < b.kcal
+}
+
+function usedUpG({ set, grams }: Proposal): number {
+  let sum = 0
+  for (let j = 0; j < set.length; j++) if (set[j]!.useUp) sum += grams[j]!
+  return sum
 }
 
 const comparator = (a: Proposal, b: Proposal): number => (better(a, b) ? -1 : better(b, a) ? 1 : 0)

@@ -135,7 +135,7 @@ describe('thrifty and practical grams', () => {
       fc.property(setOf(1, 4), window, (set, of) => {
         const best = bestGrams(set, of)
         if (best === null) return
-        const { grams, quality, keeps: said } = practicalGrams(set, best.grams, of)
+        const { grams, quality, keeps: said } = practicalGrams(set, [best.grams], of)
         grams.forEach((g, j) => {
           const { food, leastG, mostG } = set[j]!
           const whole = Math.abs(g / food.stepG - Math.round(g / food.stepG)) < 1e-9
