@@ -2,7 +2,8 @@ import { chmod, copyFile, mkdir, readFile, rm, writeFile } from 'node:fs/promise
 import { build } from 'esbuild'
 
 /**
- * Bundles the program into dist/: shortstave.js, which every command starts from, the parts that commands load when
+ * Bundles the program into dist/: shortstave.js, which every command starts from, pairing-thread.js, in which the
+ * screens work out large shelves, the parts that commands load when
  * they need them, and the data. Everything is inside, so that the packed program has no dependencies to install. The
  * parts stand in files of their own because Node compiles a module whole before it runs: with the screens and the
  * checks in the first file, each one-shot command would start at twice the time.
@@ -15,7 +16,10 @@ const { version } = JSON.parse(await readFile(at('package.json'), 'utf8')) as { 
 await rm(at('dist'), { recursive: true, force: true })
 await mkdir(at('dist'))
 await build({
-  entryPoints: { shortstave: at('src/cli/main.ts') },
+  entryPoints: {
+    shortstave: at('src/cli/main.ts'),
+    'pairing-thread': at('src/tui/pairings/thread.ts'),
+  },
   outdir: at('dist'),
   chunkNames: 'part-[hash]',
   bundle: true,
@@ -43,6 +47,33 @@ await build({
       setup(bundler) {
         bundler.onResolve({ filter: /^react-devtools-core$/ }, ({ path }) => ({ path, namespace: 'empty' }))
         bundler.onLoad({ filter: /.*/, namespace: 'empty' }, () => ({ contents: 'export default {}' }))
+      },
+    },
+    // ink's layout engine would fetch its WebAssembly from a data URL, and Node loads its whole HTTP client for that, a
+    // fifth of the time to the first frame; told that there is no fetch, the engine decodes it.
+    {
+      name: 'no-fetch',
+      setup(bundler) {
+        bundler.onLoad({ filter: /yoga-wasm-base64-esm\.js$/ }, async ({ path }) => {
+          const contents = await readFile(path, 'utf8')
+          const told = contents.replaceAll('"function"!=typeof fetch', '!0')
+          if (told === contents)
+            throw new Error(`${path} no longer asks whether there is a fetch; see bundle.ts`)
+          return { contents: told }
+        })
+      },
+    },
+    // ink measures each line letter by letter with tables of emoji; the screens' own measure is told at a glance for
+    // nearly all lines, and both must agree on what a line takes.
+    {
+      name: 'one-measure',
+      setup(bundler) {
+        bundler.onResolve({ filter: /^string-width$/ }, () => ({ path: at('src/tui/text/width.ts') }))
+        bundler.onLoad({ filter: /tui[\\/]text[\\/]width\.ts$/ }, async ({ path }) => ({
+          contents: `${await readFile(path, 'utf8')}\nexport default widthOf`,
+          loader: 'ts',
+          resolveDir: at('src/tui/text'),
+        }))
       },
     },
     // zod brings its messages in fifty languages, a quarter of the bundle; the program speaks one.

@@ -3,11 +3,10 @@ import { withOwnFoods } from '../foods/own-table.ts'
 import type { Finder } from '../foods/search.ts'
 import { createFinder } from '../foods/search.ts'
 import type { Table } from '../foods/table.ts'
-import { findPairings } from '../pairing/find-pairings.ts'
 import type { Settings } from '../shelf/settings.ts'
 import type { Shelf } from '../shelf/shelf.ts'
 import type { Kept, ShelfStore } from '../shelf/store.ts'
-import { problemOf } from './problem-of.ts'
+import { Pairer } from './pairings/pairer.ts'
 import type { Effect, Event, Knowledge, State } from './state.ts'
 import { update } from './update.ts'
 
@@ -24,6 +23,8 @@ export interface Opened {
 const PAUSE_MS = 15
 /** An answer that takes longer than this is waited for in sight, ms. */
 const SLOW_MS = 100
+/** The spinner turns a step in this time, ms. */
+const SPIN_MS = 120
 
 /**
  * The edge: holds the state, feeds events through the pure update, carries out what it asks for, and tells when there
@@ -37,6 +38,10 @@ export class Edge {
   private readonly quit: () => void
   private queue: Promise<void> = Promise.resolve()
   private pending = 0
+  private readonly pairer = new Pairer()
+  private pause: NodeJS.Timeout | undefined
+  private slow: NodeJS.Timeout | undefined
+  private asking = false
 
   constructor(of: {
     state: State
@@ -82,11 +87,16 @@ export class Edge {
       const store = await this.opened.store()
       this.tell(await store.read(), false)
       this.carryOut({ effect: 'pair', question: this.state.question })
+      // The finder is made before the first letter asks for it, once the screen stands.
+      setTimeout(() => this.knowledge.finder, PAUSE_MS)
     })
   }
 
   /** Resolves when everything that was to be kept is. */
   settled(): Promise<void> {
+    clearTimeout(this.pause)
+    clearTimeout(this.slow)
+    this.pairer.end()
     return this.queue
   }
 
@@ -96,7 +106,7 @@ export class Edge {
         this.quit()
         return
       case 'pair':
-        this.pair(effect.question)
+        this.pair()
         return
       case 'settings':
         this.inTurn(async () => {
@@ -106,17 +116,13 @@ export class Edge {
         return
       case 'own-food':
         this.learn(effect.own)
-        this.inTurn(async () => {
-          const store = await this.opened.store()
-          const { document } = await store.read()
-          this.tell(await store.setOwnFoods([...document.ownFoods, effect.own]), false)
-        })
+        this.keep(effect.sample, store => store.setOwnFoods(kept => [...kept, effect.own]))
         return
       case 'change':
         this.keep(effect.sample, store => store.change(effect.changes, effect.label))
         return
       case 'replace':
-        this.keep(null, store => store.replace(effect.shelf, effect.label))
+        this.keep(effect.sample, store => store.replace(effect.shelf, effect.label))
         return
       case 'serve':
         this.keep(effect.sample, store => store.serve(effect.plate, effect.takes))
@@ -169,19 +175,44 @@ export class Edge {
   }
 
   /** Works pairings out after the keys that are waiting; a question that is no longer asked is dropped unanswered. */
-  private pair(question: number): void {
-    const slow = setTimeout(() => this.send({ event: 'slow', question }), SLOW_MS)
-    setTimeout(() => {
-      if (question === this.state.question) {
-        const answer = findPairings(problemOf(this.state, this.knowledge))
-        this.send({ event: 'paired', question, answer })
-      }
-      clearTimeout(slow)
-    }, PAUSE_MS)
+  private pair(): void {
+    clearTimeout(this.pause)
+    this.pause = setTimeout(() => this.ask(), PAUSE_MS)
+    this.slow ??= setTimeout(() => this.wait(), SLOW_MS)
+  }
+
+  private async ask(): Promise<void> {
+    if (this.asking) return
+    this.asking = true
+    const { question, shelf, settings } = this.state
+    const { table } = this.knowledge
+    try {
+      const answer = await this.pairer.find({ shelf, settings, table })
+      this.send({ event: 'paired', question, answer })
+    } catch (error) {
+      this.send({ event: 'said', message: (error as Error).message })
+    }
+    this.asking = false
+    if (question !== this.state.question && this.state.stale) {
+      this.ask()
+    } else {
+      clearTimeout(this.slow)
+      this.slow = undefined
+    }
+  }
+
+  /** An answer is late: it is waited for in sight, and the spinner turns until it comes. */
+  private wait(): void {
+    this.send({ event: 'slow', question: this.state.question })
+    const turning = setInterval(() => {
+      if (this.state.slow) this.send({ event: 'tick' })
+      else clearInterval(turning)
+    }, SPIN_MS)
+    turning.unref()
   }
 }
 
-/** The table with its finder, which is made at the first search: the first frame needs none. */
+/** The table with its finder, which is made when it is first asked for: the first frame needs none. */
 function knowledgeOf(table: Table, today: string, colour: boolean): Knowledge {
   let finder: Finder | undefined
   return {

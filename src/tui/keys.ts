@@ -65,12 +65,13 @@ export interface KeysRead {
 
 /**
  * The keys in a chunk of terminal input. Chunks may hold many keys (fast typing) or end within a sequence: `rest` is
- * to be put before the next chunk. Several lines at once are a paste also where the terminal doesn't say so.
+ * to be put before the next chunk. Return is never taken for a line of a paste, since fast typing may come in one chunk
+ * too; a line feed within text is (terminals send Return for the key), so that a paste without marks is still read.
  */
 export function readKeys(input: string): KeysRead {
   const keys: Key[] = []
   let at = 0
-  const unmarked = !input.includes('\u001b') && input.length > 2 && /[^\r\n][\r\n]+[^\r\n]/.test(input)
+  const unmarked = !input.includes('\u001b') && /[^\r\n]\r?\n[^\r\n]/.test(input)
   if (unmarked) return { keys: [{ key: 'paste', text: input }], rest: '' }
   while (at < input.length) {
     const letter = input[at]!
@@ -86,7 +87,7 @@ export function readKeys(input: string): KeysRead {
         const named = SEQUENCES[sequence[1]!]
         if (named !== undefined) keys.push({ key: named })
         at += sequence[0].length
-      } else if (/^\[[0-9;?]*$|^O$/.test(input.slice(at + 1)) && input.length > at + 1) {
+      } else if (/^(\[[0-9;?]*|O)?$/.test(input.slice(at + 1))) {
         return { keys, rest: input.slice(at) }
       } else {
         keys.push({ key: 'escape' })
@@ -104,4 +105,10 @@ export function readKeys(input: string): KeysRead {
     }
   }
   return { keys, rest: '' }
+}
+
+/** The keys in what waited for its rest when none came: Escape alone, a paste whose end was lost. */
+export function keysOfRest(rest: string): Key[] {
+  if (rest.startsWith(PASTE_START)) return [{ key: 'paste', text: rest.slice(PASTE_START.length) }]
+  return rest === '' ? [] : [{ key: 'escape' }]
 }

@@ -18,7 +18,10 @@ export function targetOf(settings: Settings): number {
 const PAIRINGS = 5
 
 /** The pairing problem that the shelf and the bench set. */
-export function problemOf({ shelf, settings }: State, { table }: Knowledge): PairingProblem {
+export function problemOf(
+  { shelf, settings }: Pick<State, 'shelf' | 'settings'>,
+  { table }: Pick<Knowledge, 'table'>,
+): PairingProblem {
   return {
     shelf: shelf.items.flatMap((item): ShelfFood[] => {
       const food = table.foodById.get(item.food)

@@ -13,12 +13,12 @@ const FOUND_AT_MOST = 200
 
 /** What the shelf screen lists: what is there and answers the find line, then foods of the table that do. */
 export function shelfRows(state: State, knowledge: Knowledge): ShelfRow[] {
-  const { table, finder } = knowledge
+  const { table } = knowledge
   const foodOf = (item: ShelfItem): Food | null => table.foodById.get(item.food) ?? null
   if (state.find.trim() === '') {
     return ordered(state, foodOf).map(item => ({ kind: 'here', item, food: foodOf(item), matched: [] }))
   }
-  const hits = finder.find(state.find, { limit: FOUND_AT_MOST })
+  const hits = knowledge.finder.find(state.find, { limit: FOUND_AT_MOST })
   const itemByFood = new Map(state.shelf.items.map(item => [item.food, item]))
   const here = hits.flatMap(({ food, matched }): ShelfRow[] => {
     const item = itemByFood.get(food.id)

@@ -9,6 +9,7 @@ import type { ServedPlate } from '../shelf/document.ts'
 import type { Settings } from '../shelf/settings.ts'
 import type { Shelf } from '../shelf/shelf.ts'
 import type { Key } from './keys.ts'
+import type { Typed } from './updates/typing.ts'
 
 export const SCREENS = ['shelf', 'bench', 'plate'] as const
 export type ScreenName = (typeof SCREENS)[number]
@@ -24,7 +25,7 @@ export type OwnStep = (typeof OWN_STEPS)[number]
 export type OwnDraft = Partial<Record<OwnStep, string>>
 
 /** A line that is being typed, and what it is for. */
-export interface Prompt {
+export interface Prompt extends Typed {
   for:
     | { what: 'amount'; food: string; adds: boolean }
     | { what: 'use-by'; food: string }
@@ -46,9 +47,6 @@ export interface Prompt {
     | { what: 'plate-add' }
     | { what: 'eat-at' }
   label: string
-  text: string
-  /** the text is a proposal: the first letter typed replaces it */
-  fresh: boolean
   /** why what was typed could not be taken, with the mend */
   problem: string | null
 }
@@ -131,15 +129,17 @@ export type Event =
   | { event: 'paired'; question: number; answer: PairingAnswer }
   | { event: 'slow'; question: number }
   | { event: 'said'; message: string }
+  /** time passes while an answer is waited for in sight */
+  | { event: 'tick' }
 
 /** What the edge carries out. */
 export type Effect =
   | { effect: 'change'; changes: ShelfChange[]; label: string; sample: Shelf | null }
-  | { effect: 'replace'; shelf: Shelf; label: string }
+  | { effect: 'replace'; shelf: Shelf; label: string; sample: Shelf | null }
   | { effect: 'undo' | 'redo' }
   | { effect: 'serve'; plate: ServedPlate; takes: ShelfChange[]; sample: Shelf | null }
   | { effect: 'settings'; settings: Settings }
-  | { effect: 'own-food'; own: OwnFood }
+  | { effect: 'own-food'; own: OwnFood; sample: Shelf | null }
   | { effect: 'pair'; question: number }
   | { effect: 'quit' }
 

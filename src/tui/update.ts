@@ -27,6 +27,8 @@ export function update(state: State, event: Event, knowledge: Knowledge): Update
       })
     case 'slow':
       return only(event.question === state.question && state.stale ? { ...state, slow: true } : state)
+    case 'tick':
+      return only(state.slow ? { ...state, spin: state.spin + 1 } : state)
     case 'said':
       return only({ ...state, message: event.message })
     case 'key':
@@ -40,6 +42,10 @@ function keyed(state: State, key: Key, knowledge: Knowledge): Updated {
   if (state.prompt !== null) return promptKeys(state, key, knowledge)
   if (state.pasted !== null) return pastedKeys(state, key, knowledge)
   if (key.key === 'text' && key.text === '?') return only({ ...state, page: helpPage(state) })
+  if (state.screen !== 'shelf' && !state.asksServe && key.key === 'text') {
+    if (key.text === '<') return only({ ...state, message: 'Undoing ...' }, { effect: 'undo' })
+    if (key.text === '>') return only({ ...state, message: 'Doing it again ...' }, { effect: 'redo' })
+  }
   if (!state.asksServe && (key.key === 'tab' || key.key === 'back-tab')) {
     const step = key.key === 'tab' ? 1 : SCREENS.length - 1
     const screen = SCREENS[(SCREENS.indexOf(state.screen) + step) % SCREENS.length]!
@@ -53,7 +59,7 @@ function kept(state: State, event: Extract<Event, { event: 'kept' }>, knowledge:
   const message =
     event.problem ??
     (event.label === null ? state.message : `${event.restored ? 'Undone' : 'Done again'}: ${event.label}.`)
-  const next = { ...state, served: event.served, message }
+  const next = { ...state, sample: state.sample && !event.begun, served: event.served, message }
   const same = JSON.stringify(event.shelf) === JSON.stringify(state.shelf)
   if (same || !event.begun) return only(next)
   return asked({ ...next, shelf: event.shelf, sample: false }, knowledge)

@@ -12,7 +12,7 @@ import { spokenLines } from './views/spoken.ts'
 /** The screen as lines: drawn from the state alone. */
 export function view(state: State, knowledge: Knowledge): string[] {
   const lines = screenOf(state, knowledge)
-  return state.spoken ? spokenLines(lines) : lines
+  return state.spoken ? spokenLines(state, lines) : lines
 }
 
 function screenOf(state: State, knowledge: Knowledge): string[] {

@@ -42,7 +42,7 @@ describe('in a real terminal', () => {
       screen.type(find)
       await screen.shows(`▸ ${name}`)
       screen.type(KEYS.enter)
-      await screen.shows(`How much ${name}`)
+      await screen.shows(`${name}: how much`)
       screen.type(amount)
       screen.type(KEYS.enter)
       await screen.shows(`${name}: `)

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { readKeys } from '../../src/tui/keys.ts'
+import { keysOfRest, readKeys } from '../../src/tui/keys.ts'
 
 const names = (input: string) =>
   readKeys(input).keys.map(key => ('text' in key ? `${key.key}:${key.text}` : key.key))
@@ -18,7 +18,6 @@ describe('readKeys', () => {
       'back-tab',
     ])
     expect(names('\u0003')).toEqual(['interrupt'])
-    expect(names('\u001b')).toEqual(['escape'])
     expect(names('\u001b[3~\u001bOH\u001b[6~')).toEqual(['delete', 'home', 'page-down'])
   })
 
@@ -35,7 +34,26 @@ describe('readKeys', () => {
     const part = readKeys('\u001b[200~1 can')
     expect(part.keys).toEqual([])
     expect(names(`${part.rest} beans\u001b[201~`)).toEqual(['paste:1 can beans'])
+    expect(names('1 can chickpeas\n2 cups rice')).toEqual(['paste:1 can chickpeas\n2 cups rice'])
     expect(names('1 can chickpeas\r\n2 cups rice')).toEqual(['paste:1 can chickpeas\r\n2 cups rice'])
+  })
+
+  it('takes fast typing with Return in it for keys, not for a paste', () => {
+    expect(names('oats\r500\r')).toEqual([
+      ...[...'oats'].map(letter => `text:${letter}`),
+      'enter',
+      ...[...'500'].map(letter => `text:${letter}`),
+      'enter',
+    ])
+  })
+
+  it('waits to see whether Escape begins a sequence, and takes it for the key where nothing follows', () => {
+    expect(readKeys('\u001b')).toEqual({ keys: [], rest: '\u001b' })
+    expect(names(`${readKeys('\u001b').rest}[A`)).toEqual(['up'])
+    expect(names('\u001b\u001b[B')).toEqual(['escape', 'down'])
+    expect(keysOfRest('\u001b')).toEqual([{ key: 'escape' }])
+    expect(keysOfRest('')).toEqual([])
+    expect(keysOfRest('\u001b[200~1 can beans')).toEqual([{ key: 'paste', text: '1 can beans' }])
   })
 
   it('takes letters of every script whole, and no unknown sequence for text', () => {

@@ -13,9 +13,9 @@ export function benchKeys(state: State, key: Key, knowledge: Knowledge): Updated
   const last = Math.max(0, pairings.length - 1)
   switch (key.key) {
     case 'up':
-      return only({ ...state, chosen: Math.max(0, state.chosen - 1) })
+      return only({ ...state, chosen: Math.max(0, state.chosen - 1), message: '' })
     case 'down':
-      return only({ ...state, chosen: Math.min(last, state.chosen + 1) })
+      return only({ ...state, chosen: Math.min(last, state.chosen + 1), message: '' })
     case 'home':
       return only({ ...state, chosen: 0 })
     case 'end':

@@ -50,8 +50,8 @@ export function ownAnswered(
   const { own } = reading
   const message = `${own.name} is kept; find it, and put it on the shelf.`
   return only(
-    { ...state, prompt: null, find: own.name.slice(0, 80), cursor: 0, message },
-    { effect: 'own-food', own },
+    { ...state, prompt: null, sample: false, find: own.name.slice(0, 80), cursor: 0, message },
+    { effect: 'own-food', own, sample: state.sample ? state.shelf : null },
   )
 }
 

@@ -23,14 +23,24 @@ export function pastedLine(text: string, { finder }: Knowledge): PastedLine {
   }
 }
 
-/** The lines of a pasted text, without list marks and blank lines. */
-export function pastedLines(text: string, knowledge: Knowledge): PastedLine[] {
+/** The lines of a pasted text that say something, without list marks. */
+function saidLines(text: string): string[] {
   return text
     .split(/\r\n|\r|\n/)
     .map(line => line.replace(/^\s*(?:[-*•]|\d+[.)])\s+/, '').trim())
     .filter(line => line !== '')
+}
+
+/** The lines of a pasted text, read. */
+export const pastedLines = (text: string, knowledge: Knowledge): PastedLine[] =>
+  saidLines(text)
     .slice(0, LINES_AT_MOST)
     .map(line => pastedLine(line, knowledge))
+
+/** What is to be said of a paste: that it was too long, where it was. */
+export function pastedMessage(text: string, read: number): string {
+  const more = saidLines(text).length - read
+  return more > 0 ? `The first ${read} lines were read; paste the other ${more} after them.` : ''
 }
 
 /** The list of a paste: row 0 puts what was understood on the shelf, the others are its lines. */

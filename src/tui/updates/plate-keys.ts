@@ -187,7 +187,7 @@ function serveAnswered(state: State, key: Key, knowledge: Knowledge): Updated {
     shelf: result.shelf,
     sample: false,
     served: [...state.served, plate],
-    message: `Served: ${servings} ${servings === 1 ? 'serving' : 'servings'} off the shelf, kept under today. < on the shelf undoes it.`,
+    message: `Served: ${servings} ${servings === 1 ? 'serving' : 'servings'} off the shelf, kept under today; < undoes it.`,
   }
   return asked(next, knowledge, { effect: 'serve', plate, takes, sample })
 }

@@ -2,38 +2,25 @@ import type { AllergenId } from '../../foods/allergens.ts'
 import type { Food } from '../../foods/food.ts'
 import { readPortion } from '../../foods/read-portion.ts'
 import { readAllergens } from '../../kitchen/allergen-names.ts'
-import { isDay } from '../../shelf/marks.ts'
 import { settingsSchema } from '../../shelf/settings.ts'
 import type { Key } from '../keys.ts'
 import { cardPage } from '../pages.ts'
 import { type Knowledge, only, type Prompt, type State, type Updated } from '../state.ts'
+import { dayByWords } from '../text/day-words.ts'
 import { grams } from '../text/figures.ts'
 import { changeSettings, changeShelf } from './changes.ts'
 import { ownAnswered } from './own-food-keys.ts'
 import { pastedLine } from './pasted-keys.ts'
 import { withPlate } from './plate-keys.ts'
+import { typedInto } from './typing.ts'
 
-/** Typing into the open line. The first letter typed replaces a proposed text. */
+/** Typing into the open line, and taking or leaving it. */
 export function promptKeys(state: State, key: Key, knowledge: Knowledge): Updated {
   const prompt = state.prompt!
-  const typed = (text: string): Updated =>
-    only({ ...state, prompt: { ...prompt, text: text.slice(0, 120), fresh: false, problem: null } })
-  switch (key.key) {
-    case 'escape':
-      return only({ ...state, prompt: null })
-    case 'backspace':
-      return typed([...prompt.text].slice(0, -1).join(''))
-    case 'clear-line':
-      return typed('')
-    case 'text':
-      return typed((prompt.fresh ? '' : prompt.text) + key.text)
-    case 'paste':
-      return typed(prompt.text + key.text.replace(/[\r\n]+/g, ' '))
-    case 'enter':
-      return taken(state, prompt, knowledge)
-    default:
-      return only(state)
-  }
+  if (key.key === 'escape') return only({ ...state, prompt: null })
+  if (key.key === 'enter') return taken(state, prompt, knowledge)
+  const typed = typedInto(prompt, key)
+  return only(typed === null ? state : { ...state, prompt: { ...prompt, ...typed, problem: null } })
 }
 
 const refused = (state: State, problem: string): Updated =>
@@ -57,9 +44,9 @@ function taken(state: State, prompt: Prompt, knowledge: Knowledge): Updated {
     }
     case 'use-by': {
       const none = text === '' || text === 'none'
-      if (!none && !isDay(text))
-        return refused(state, 'Give a day that there is, such as 2026-12-31, or none.')
-      const useBy = none ? null : text
+      const useBy = none ? null : dayByWords(text, knowledge.today)
+      if (!none && useBy === null)
+        return refused(state, 'Give a day that there is: 3 days, friday, 31 dec, 2026-12-31; or none.')
       return changeShelf(
         closed,
         [{ do: 'set', food: goal.food, useBy }],

@@ -1,3 +1,6 @@
+import type { Food } from '../../foods/food.ts'
+import { partPortion } from '../../foods/part-portion.ts'
+import { readPortion } from '../../foods/read-portion.ts'
 import { EMPTY_SHELF, type ShelfItem } from '../../shelf/shelf.ts'
 import type { Key } from '../keys.ts'
 import { foodPage } from '../pages.ts'
@@ -6,7 +9,7 @@ import { type Knowledge, ORDERS, only, type State, type Updated } from '../state
 import { asked, changeShelf } from './changes.ts'
 import { openPrompt } from './open-prompt.ts'
 import { askOwn } from './own-food-keys.ts'
-import { pastedLines } from './pasted-keys.ts'
+import { pastedLines, pastedMessage } from './pasted-keys.ts'
 
 /**
  * The shelf screen: letters find, signs act. So nobody has to know in which mode a key is typed.
@@ -31,22 +34,29 @@ export function shelfKeys(state: State, key: Key, knowledge: Knowledge): Updated
       return signed(state, '#', knowledge)
     case 'paste': {
       const lines = pastedLines(key.text, knowledge)
+      if (lines.length === 0) return only({ ...state, message: 'Nothing was pasted that can be read.' })
       if (lines.length === 1)
-        return only({ ...state, find: state.find + lines[0]!.text.slice(0, 80), cursor: 0 })
-      return only({ ...state, pasted: lines, pasteCursor: 0, message: '' })
+        return only({ ...state, find: (state.find + lines[0]!.text).slice(0, FIND_AT_MOST), cursor: 0 })
+      return only({ ...state, pasted: lines, pasteCursor: 0, message: pastedMessage(key.text, lines.length) })
     }
     case 'text':
       if (isSign(key.text, state)) return signed(state, key.text, knowledge)
-      return only({ ...state, find: (state.find + key.text).slice(0, 80), cursor: 0, message: '' })
+      return only({ ...state, find: (state.find + key.text).slice(0, FIND_AT_MOST), cursor: 0, message: '' })
     default:
       return only(state)
   }
 }
 
-/** Signs that act. The hyphen and the comma stand in names of foods; digits only begin a find line after letters. */
+/** The longest find line. */
+const FIND_AT_MOST = 80
+
+/**
+ * Signs that act. The hyphen and the comma stand in names of foods; digits only begin a find line after letters. A
+ * point or a slash after a digit belongs to an amount: 1.5 cups, 1/2 cup.
+ */
 const SIGNS = new Set(['!', '.', '#', '=', '/', '<', '>', '@', '+'])
-const isSign = (text: string, state: State): boolean =>
-  SIGNS.has(text) || (text === '0' && state.sample && state.find === '')
+const isSign = (text: string, { find, sample }: State): boolean =>
+  SIGNS.has(text) ? !(/[./]/.test(text) && /\d$/.test(find)) : text === '0' && sample && find === ''
 
 function moved(state: State, key: string, knowledge: Knowledge): State {
   const last = shelfRows(state, knowledge).length - 1
@@ -75,13 +85,26 @@ function entered(state: State, knowledge: Knowledge): Updated {
   if (row.kind === 'here' && row.food === null)
     return only({ ...state, message: 'This food is not in the table; # takes it off.' })
   const food = row.food!
+  const said = amountSaid(state.find, food, knowledge)
+  const adds = row.kind === 'table' || said !== null
+  const there = row.kind === 'here' ? `${Number(row.item.grams.toFixed(1))} g` : `${food.portionG.usual} g`
   return only(
     openPrompt(state, {
-      for: { what: 'amount', food: food.id, adds: row.kind === 'table' },
-      label: row.kind === 'table' ? `How much ${food.name}?` : `${food.name}: how much is there now?`,
-      text: `${row.kind === 'table' ? food.portionG.usual : Number(row.item.grams.toFixed(1))} g`,
+      for: { what: 'amount', food: food.id, adds },
+      label: adds ? `${food.name}: how much do you put there?` : `${food.name}: how much is there now?`,
+      text: said ?? there,
     }),
   )
+}
+
+/** The amount that stands in the find line with the food ("2 cups red lentils"), or null. */
+function amountSaid(find: string, food: Food, { finder }: Knowledge): string | null {
+  const { amount, amountText } = partPortion(find)
+  if (amount === null) return null
+  const reading = readPortion(`${amountText} ${food.id}`, finder)
+  if (!reading.ok) return null
+  // A bare count (3 eggs) is told in grams, because a bare number in the line for amounts is grams.
+  return amount.terms[0]?.unit === null ? `${Number(reading.grams.toFixed(1))} g` : amountText
 }
 
 function signed(state: State, sign: string, knowledge: Knowledge): Updated {
@@ -98,9 +121,14 @@ function signed(state: State, sign: string, knowledge: Knowledge): Updated {
       shelf: EMPTY_SHELF,
       sample: false,
       cursor: 0,
-      message: 'An empty shelf. Type a food that you have.',
+      message: 'An empty shelf. Type a food that you have; < brings the sample back.',
     }
-    return asked(empty, knowledge, { effect: 'replace', shelf: EMPTY_SHELF, label: 'start an empty shelf' })
+    return asked(empty, knowledge, {
+      effect: 'replace',
+      shelf: EMPTY_SHELF,
+      label: 'start an empty shelf',
+      sample: state.shelf,
+    })
   }
   const row = rowUnder(state, knowledge)
   if (row === null) return only({ ...state, message: 'There is no food under the cursor.' })
@@ -118,7 +146,7 @@ function signed(state: State, sign: string, knowledge: Knowledge): Updated {
       return only(
         openPrompt(state, {
           for: { what: 'use-by', food: row.item.food },
-          label: `${name}: use by which day (2026-12-31, or none)?`,
+          label: `${name}: use by when (3 days, friday, 31 dec, 2026-12-31; none)?`,
           text: row.item.useBy ?? '',
         }),
       )

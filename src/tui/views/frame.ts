@@ -2,6 +2,7 @@ import { SCREENS, type State } from '../state.ts'
 import { STYLE } from '../style.ts'
 import { clip, padEnd, wrapLines } from '../text/lines.ts'
 import { widthOf } from '../text/width.ts'
+import type { Typed } from '../updates/typing.ts'
 
 /** The least terminal that the screens fit into. */
 export const LEAST = { columns: 60, rows: 16 }
@@ -71,13 +72,16 @@ export function promptLines(state: State): string[] {
   return lines
 }
 
-/** What is typed, with the caret; the end of it where it is longer than the line. */
-function typedText({ text, fresh }: { text: string; fresh: boolean }, room: number): string {
+/** What is typed, with the caret; the part around the caret where it is longer than the line. */
+function typedText({ text, caret, fresh }: Typed, room: number): string {
   const letters = [...text]
   let from = 0
-  while (widthOf(letters.slice(from).join('')) > room - 1) from++
-  const shown = letters.slice(from).join('')
-  return fresh ? STYLE.reverse(shown) : `${shown}${STYLE.reverse(' ')}`
+  while (from < caret && widthOf(letters.slice(from, caret + 1).join('')) > room - 1) from++
+  const shown = (start: number, end?: number) => letters.slice(start, end).join('')
+  if (fresh) return STYLE.reverse(clip(text, room))
+  const before = shown(from, caret)
+  const after = clip(shown(caret + 1), Math.max(0, room - widthOf(before) - 2))
+  return `${before}${STYLE.reverse(letters[caret] ?? ' ')}${after}`
 }
 
 /** Above the keys: the open line, or what was said last, or else a line that always stands there. */
