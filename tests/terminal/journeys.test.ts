@@ -159,6 +159,79 @@ describe('in a real terminal', () => {
     expect(after).toContain('\u001b[?2004l')
   })
 
+  it.each(['SIGINT', 'SIGTERM', 'SIGHUP'] as const)(
+    'leaves the terminal as it was on %s too',
+    async signal => {
+      const screen = start()
+      await screen.shows('the sample shelf')
+      screen.kill(signal)
+      await screen.ends()
+      await screen.leaves()
+      const after = screen.written.slice(screen.written.lastIndexOf('\u001b[?1049l') - 40)
+      expect(after).toContain('\u001b[?25h')
+      expect(after).toContain('\u001b[?2004l')
+    },
+  )
+
+  it('types a line, mends it at the caret, and takes Escape alone for back', async () => {
+    const screen = start()
+    await screen.shows('the sample shelf')
+    screen.type('2 cups red lentils')
+    await screen.shows('▸ Lentils, red, dry')
+    screen.type(KEYS.enter)
+    await screen.shows('> 2 cups')
+    screen.type(`${KEYS.left.repeat(5)}5${KEYS.enter}`)
+    await screen.shows('4800 g put on the shelf')
+    screen.type('tofu')
+    await screen.shows('> tofu')
+    screen.type(KEYS.escape)
+    await screen.shows('type to find a food')
+  })
+
+  it('takes a burst of keys with Return in it for keys', async () => {
+    const screen = start({ columns: 100, rows: 30 })
+    await screen.shows('the sample shelf')
+    screen.type('0')
+    await screen.shows('An empty shelf')
+    screen.type(`red lentils dry${KEYS.enter}500${KEYS.enter}brown rice dry${KEYS.enter}1 kg${KEYS.enter}`)
+    await screen.shows(/Lentils, red, dry +500 g/)
+    await screen.shows(/Rice, brown, dry +1000 g/)
+  })
+
+  it('answers keys on a shelf of 200 foods while its pairings are worked out', async () => {
+    const screen = start({ columns: 100, rows: 30 })
+    await screen.shows('the sample shelf')
+    const { foods } = JSON.parse(readFileSync('data/foods.json', 'utf8')) as {
+      foods: { id: string; name: string }[]
+    }
+    screen.type('0')
+    await screen.shows('An empty shelf')
+    const lines = foods.slice(0, 200).map(({ id }) => `500 g ${id}`)
+    screen.paste(lines.join('\n'))
+    await screen.shows('pasted: 200 lines, 200 understood')
+    screen.type(KEYS.enter)
+    await screen.shows('your shelf · 200 foods')
+    screen.type(KEYS.tab)
+    await screen.shows(/▸ 1 .* g/)
+    for (const key of ['e', 'd', 'e', 'd', 'p', 'p']) screen.type(key)
+    await screen.hides('working it out')
+    await screen.shows(/▸ 1 .* g/)
+    expect(screen.text()).not.toContain('· eggs')
+  })
+
+  it('is drawn where the environment says CI, and at 140 by 45 with the staves beside the list', async () => {
+    const screen = start({ columns: 140, rows: 45, env: { CI: 'true' } })
+    await screen.shows('the sample shelf')
+    await screen.shows(/His +Ile +Leu/)
+    screen.type(KEYS.tab)
+    await screen.shows(/▸ 1 .* g/)
+    await screen.shows(/His +Ile +Leu/)
+    screen.type(KEYS.enter)
+    await screen.shows('Allergens:')
+    await screen.shows(/lifts it|Nothing would lift/)
+    await screen.fits(140)
+  })
+
   it('uses no colour under NO_COLOR, and the letters still tell foods apart', async () => {
     const screen = start({ env: { NO_COLOR: '1' } })
     await screen.shows('the sample shelf')

@@ -116,6 +116,15 @@ export class Screen {
     return this.text()
   }
 
+  kill(signal: 'SIGINT' | 'SIGTERM' | 'SIGHUP'): void {
+    process.kill(this.pty.pid, signal)
+  }
+
+  /** Waits until the screen that the program was started from is back. */
+  async leaves(withinMs = 15_000): Promise<string> {
+    return this.until(() => !this.isAlternate(), 'the screen before', withinMs)
+  }
+
   close({ keepHome = false } = {}): void {
     if (this.exitCode === null) this.pty.kill('SIGKILL')
     if (!keepHome) rmSync(this.home, { recursive: true, force: true })
