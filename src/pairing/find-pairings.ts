@@ -126,7 +126,7 @@ function nearest(problem: PairingProblem, { forced, open }: Admitted, window: Wi
   return { reached: false, pairings: [pairingOf(proposal, problem)], reason }
 }
 
-function reasonFor({ proteinG, tooLittle, proposal }: Reach, problem: PairingProblem): string {
+function reasonFor({ proteinG, tooLittle, proposal, over }: Reach, problem: PairingProblem): string {
   const target = `${figure(problem.targetG)} g protein a serving`
   if (!tooLittle) {
     return `${target} cannot be kept to: the least portions of what must be in already bring ${figure(proteinG)} g. Raise the target, or take a mark off.`
@@ -136,6 +136,10 @@ function reasonFor({ proteinG, tooLittle, proposal }: Reach, problem: PairingPro
     ...(problem.massAtMostG === null ? [] : [`${figure(problem.massAtMostG)} g`]),
   ]
   const within = ceilings.length === 0 ? '' : ` and at most ${ceilings.join(' and ')}`
+  if (over !== undefined) {
+    const least = `${figure(over.massG)} g and ${figure(over.energyKcal)} kcal`
+    return `What must be in does not fit within ${ceilings.join(' and ')}: its least portions come to ${least} already. Raise the ceiling, or take a mark off.`
+  }
   const limits = `with at most ${problem.foodsAtMost} ${problem.foodsAtMost === 1 ? 'food' : 'foods'}${within}`
   if (proposal === null) return `${target} cannot be reached: nothing fits ${limits}.`
   const servings = problem.servings === 1 ? '' : ` shared among ${problem.servings} servings`

@@ -3,7 +3,7 @@ import type { Food } from '../foods/food.ts'
 import type { Pattern } from '../nutrition/pattern.ts'
 import type { Portion } from '../nutrition/protein-source.ts'
 import { barred, servingLimits } from './admit.ts'
-import { type Candidate, candidateOf, qualityOf } from './candidate.ts'
+import { type Candidate, candidateOf, qualityOf, totalOf } from './candidate.ts'
 import type { LiftOption, PairingProblem, ShelfFood } from './problem.ts'
 
 /** What a lift may use: the shelf with its marks, the foods that could be bought, and what is to be left out. */
@@ -13,6 +13,8 @@ export interface LiftContext {
   servings: number
   without: readonly AllergenId[]
   allow: { eggs: boolean; dairy: boolean }
+  /** the protein that a plate must keep, g; what brings it below is no lift (a plate already below may not lose more) */
+  leastProteinG?: number
   /** read only where the shelf itself does not help enough */
   market: () => readonly Food[]
 }
@@ -33,6 +35,7 @@ export function liftContext(problem: PairingProblem): LiftContext {
     servings: problem.servings,
     without: problem.without,
     allow: problem.allow,
+    leastProteinG: problem.targetG,
     market: problem.market ?? (() => []),
   }
 }
@@ -134,7 +137,10 @@ function changeOf(
   const least = Math.max(food.portionG.least, here * (1 - LITTLE / 2))
   const steps: number[] = []
   for (let g = food.stepG; here + g <= most && g <= here * LITTLE; g += food.stepG) steps.push(g)
-  for (let g = -food.stepG; here + g >= least; g -= food.stepG) steps.push(g)
+  const spareG = totalOf(plate, grams, 'protein') - (context.leastProteinG ?? 0)
+  for (let g = -food.stepG; here + g >= least && -g * plate[at]!.protein <= spareG; g -= food.stepG) {
+    steps.push(g)
+  }
   return bestStep(steps, food, true, step =>
     qualityOf(
       plate,

@@ -12,6 +12,8 @@ export interface Reach {
   proteinG: number
   /** false: the plate has too much protein rather than too little */
   tooLittle: boolean
+  /** what the least portions of the foods that must be in come to, where that alone is over a ceiling */
+  over?: { massG: number; energyKcal: number }
 }
 
 /**
@@ -24,6 +26,12 @@ export function nearestPlate(
   foodsAtMost: number,
   window: Window,
 ): Reach {
+  const over = leastOver(forced, window)
+  if (over !== null) {
+    const proteinG = forced.reduce((sum, { protein, leastG }) => sum + protein * leastG, 0)
+    const open = { ...window, energyAtMostKcal: null, massAtMostG: null }
+    return { proposal: atProtein(forced, open, proteinG, 0), proteinG, tooLittle: true, over }
+  }
   const set = [...forced]
   const byProtein = [...open].sort(
     (a, b) => b.protein * b.mostG - a.protein * a.mostG || (a.food.id < b.food.id ? -1 : 1),
@@ -42,11 +50,22 @@ export function nearestPlate(
   if (least > window.mostProteinG) {
     return { proposal: atProtein(set, window, least, 1), proteinG: least, tooLittle: false }
   }
-  return mostProtein(set, window)
+  return mostProtein(set, forced.length, window)
+}
+
+/** What the least portions come to, where they are over a ceiling; null where they are not. */
+function leastOver(
+  foods: readonly Candidate[],
+  { energyAtMostKcal, massAtMostG }: Window,
+): { massG: number; energyKcal: number } | null {
+  const massG = foods.reduce((sum, { leastG }) => sum + leastG, 0)
+  const energyKcal = foods.reduce((sum, { kcal, leastG }) => sum + kcal * leastG, 0)
+  const fits = massG <= (massAtMostG ?? massG) && energyKcal <= (energyAtMostKcal ?? energyKcal)
+  return fits ? null : { massG, energyKcal }
 }
 
 /** The most protein that a set reaches within the ceilings, by bisection over the exact inner step. */
-function mostProtein(set: readonly Candidate[], window: Window): Reach {
+function mostProtein(set: readonly Candidate[], forced: number, window: Window): Reach {
   let low = 0
   let high = Math.min(
     window.leastProteinG,
@@ -63,9 +82,10 @@ function mostProtein(set: readonly Candidate[], window: Window): Reach {
       low = middle
     }
   }
-  if (best !== null || set.length === 1) return { proposal: best, proteinG: low, tooLittle: true }
+  if (best !== null || set.length <= Math.max(1, forced))
+    return { proposal: best, proteinG: low, tooLittle: true }
   // The least portions alone break a ceiling: try with one food fewer.
-  return mostProtein(set.slice(0, -1), window)
+  return mostProtein(set.slice(0, -1), forced, window)
 }
 
 function atProtein(

@@ -29,8 +29,8 @@ function aloneReason(item: ScoredItem<Food>, score: PlateScore<Food>): string {
   const shortest = STAVE_NAMES[score.limiting!]
   const now = whole(score.staves![score.limiting!])
   return score.diaas! >= FULL
-    ? `${shortName(item.food)} needs no partner: its shortest stave, ${shortest}, is ${now} % of the pattern.`
-    : `${shortName(item.food)} alone is short of ${shortest} (${now} %).`
+    ? `${shortName(item.food)}: no partner needed; the shortest stave, ${shortest}, is ${now} % of the pattern.`
+    : `${shortName(item.food)} alone: short of ${shortest} (${now}).`
 }
 
 /** One sentence a food that is short by itself, the greatest part of the protein first. */
@@ -59,32 +59,38 @@ function shortages(proteins: readonly ScoredItem<Food>[], score: PlateScore<Food
   return lines
 }
 
-/** The stave that a food brings to a partner that is short of it; null where it carries none. */
+/**
+ * The stave that a food is rich in and a partner is short of, before all the one that is the partner's shortest; null
+ * where it carries none.
+ */
 function strongest(
   staves: Record<Stave, number>,
   proteins: readonly ScoredItem<Food>[],
   own: ReadonlyMap<ScoredItem<Food>, Record<Stave, number>>,
   item: ScoredItem<Food>,
 ): Stave | null {
-  let best: Stave | null = null
-  let margin = 0
-  for (const other of proteins) {
-    if (other === item) continue
-    const theirs = own.get(other)!
-    for (const stave of STAVES) {
-      const helps = theirs[stave] < FULL && staves[stave] > theirs[stave] ? staves[stave] - theirs[stave] : 0
-      if (helps > margin) {
-        margin = helps
-        best = stave
-      }
-    }
-  }
-  return best
+  const partners = proteins.filter(other => other !== item).map(other => own.get(other)!)
+  const missing = (theirs: Record<Stave, number>, stave: Stave) =>
+    theirs[stave] < FULL && staves[stave] >= FULL ? staves[stave] - theirs[stave] : 0
+  const greatest = (choices: readonly { stave: Stave; margin: number }[]) =>
+    choices.reduce<{ stave: Stave | null; margin: number }>(
+      (best, choice) => (choice.margin > best.margin ? choice : best),
+      { stave: null, margin: 0 },
+    ).stave
+  const shortest = partners.map(theirs => {
+    const stave = shortestStave(theirs)
+    return { stave, margin: missing(theirs, stave) }
+  })
+  const any = partners.flatMap(theirs => STAVES.map(stave => ({ stave, margin: missing(theirs, stave) })))
+  return greatest(shortest) ?? greatest(any)
 }
 
-/** A food's name without its state: `Lentils, red, dry` is `Red lentils`; other names keep their first two parts. */
+/** A food's name without its state and what is in brackets: `Lentils, red, dry` is `Red lentils`. */
 export function shortName(food: Pick<Food, 'name' | 'state'>): string {
-  const parts = food.name.split(', ').filter((part, i) => i === 0 || !STATE_WORDS.has(part))
+  const parts = food.name
+    .replace(/ \([^)]*\)/g, '')
+    .split(', ')
+    .filter((part, i) => i === 0 || !STATE_WORDS.has(part))
   const [head = food.name, ...qualities] = parts
   if (qualities.length === 0) return head
   return capital(`${qualities.slice(0, 2).join(' ')} ${lower(head)}`)
@@ -101,6 +107,8 @@ const STATE_WORDS = new Set([
   'dried',
   'fresh',
   'plain',
+  'unsalted',
+  'unsweetened',
 ])
 
 /** Whole per cent, rounded down: 99.8 is not yet 100. */

@@ -208,6 +208,22 @@ describe('where no plate is possible, the reason and the nearest plate', () => {
       1,
     ],
     [
+      'marks that do not fit within a ceiling',
+      problemOf(
+        shelfOf(
+          'adzuki-beans-boiled 21 use-up',
+          'soba-noodles-boiled 80 use-up',
+          'couscous-boiled 50 use-up',
+        ),
+        {
+          massAtMostG: 150,
+          targetG: 10,
+        },
+      ),
+      /does not fit within 150 g: its least portions come to 151 g/,
+      1,
+    ],
+    [
       'a mark against an allergen',
       problemOf(shelfOf('tofu-firm 600 use-up', 'rice-white-dry 500'), { without: ['soy'] }),
       /used up, but holds/,
