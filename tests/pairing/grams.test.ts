@@ -1,10 +1,12 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
+import { STAVES } from '../../src/nutrition/amino-acids.ts'
 import { type Candidate, candidateOf, qualityOf, totalOf } from '../../src/pairing/candidate.ts'
 import { bestGrams, type Window } from '../../src/pairing/grams.ts'
 import { bestGramsOfFew } from '../../src/pairing/pair-grams.ts'
 import { practicalGrams } from '../../src/pairing/practical.ts'
 import { thriftyGrams } from '../../src/pairing/thrift.ts'
+import { highs } from '../bench/optimum.ts'
 import { basis, table } from './problems.ts'
 
 const foods = table.foods.filter(({ place, per100g }) => place === 'protein' && per100g.proteinG > 1)
@@ -46,6 +48,32 @@ const keeps = (
   )
 }
 
+/** The exact inner step as a linear programme for the solver: y = t g, the crude protein of the plate scaled to 1. */
+function gramsProgramme(set: readonly Candidate[], of: Window): string {
+  const sum = (parts: readonly (readonly [number, string])[]) =>
+    parts
+      .filter(([value]) => value !== 0)
+      .map(([value, name]) => `${value < 0 ? '-' : '+'} ${Math.abs(value).toPrecision(15)} ${name}`)
+      .join(' ')
+  const total = (figure: (food: Candidate) => number) =>
+    set.map((food, j) => [figure(food), `y${j}`] as const)
+  const limit = (figure: (food: Candidate) => number, at: number | null, sign: '<=' | '>=') =>
+    at === null ? [] : [`${sum([...total(figure), [-at, 't']])} ${sign} 0`]
+  const rows = [
+    `${sum(total(({ crude }) => crude))} = 1`,
+    ...STAVES.map((_, i) => `${sum([...total(({ staves }) => staves[i]!), [-1, 'q']])} >= 0`),
+    ...limit(({ protein }) => protein, of.leastProteinG, '>='),
+    ...limit(({ protein }) => protein, of.mostProteinG, '<='),
+    ...limit(({ kcal }) => kcal, of.energyAtMostKcal, '<='),
+    ...limit(() => 1, of.massAtMostG, '<='),
+    ...set.flatMap(({ leastG, mostG }, j) => [
+      `y${j} - ${leastG.toPrecision(15)} t >= 0`,
+      `y${j} - ${mostG.toPrecision(15)} t <= 0`,
+    ]),
+  ]
+  return ['Maximize', ' obj: q', 'Subject To', ...rows.map((row, i) => ` r${i}: ${row}`), 'End'].join('\n')
+}
+
 describe('the exact inner step', () => {
   it('keeps to the window, reaches what it says, and no random grams do better', () => {
     fc.assert(
@@ -75,6 +103,22 @@ describe('the exact inner step', () => {
         },
       ),
       { numRuns: 300 },
+    )
+  })
+
+  it('is what a general-purpose solver (npm highs) finds, feasible or not', async () => {
+    const solver = await highs()
+    fc.assert(
+      fc.property(setOf(1, 5), window, (set, of) => {
+        const result = solver.solve(gramsProgramme(set, of), { output_flag: false } as never)
+        const best = bestGrams(set, of)
+        if (result.Status === 'Infeasible') expect(best).toBeNull()
+        else {
+          expect(result.Status).toBe('Optimal')
+          expect(best!.quality).toBeCloseTo(result.ObjectiveValue, 5)
+        }
+      }),
+      { numRuns: 150 },
     )
   })
 

@@ -1,7 +1,10 @@
 import { describe, expect, it } from 'vitest'
+import { STAVE_NAMES, STAVES } from '../../src/nutrition/amino-acids.ts'
 import { diaasOf } from '../../src/nutrition/diaas.ts'
 import { scorePlate } from '../../src/nutrition/plate-score.ts'
+import { stavesOfPlate } from '../../src/nutrition/staves.ts'
 import { complementsOf, inParts } from '../../src/pairing/complement.ts'
+import { findPairings } from '../../src/pairing/find-pairings.ts'
 import { liftContext, liftOptions, nextLift } from '../../src/pairing/lift.ts'
 import { shortName, whyOf } from '../../src/pairing/reasons.ts'
 import { basis, food, GALLEY, problemOf, shelfOf, table } from './problems.ts'
@@ -48,6 +51,42 @@ describe('what would lift a plate', () => {
     const options = liftOptions(lentils, liftContext(problemOf(shelf)))
     expect(options.map(option => option.food.id)).not.toContain('rice-brown-dry')
     expect(options.map(option => option.food.id)).not.toContain('lentils-red-boiled')
+  })
+})
+
+describe('what would lift a pairing', () => {
+  it('keeps its protein, its portions and what is on hand', () => {
+    const shelves = [
+      shelfOf('lentils-red-dry 500', 'rice-white-dry 1000'),
+      shelfOf('lentils-red-dry 300', 'rice-brown-dry 500', 'sesame-seeds 100', 'peanuts-roasted 200'),
+      GALLEY.filter(({ food: { allergens } }) => !allergens.includes('soy')),
+    ]
+    let met = 0
+    for (const shelf of shelves) {
+      for (const targetG of [20, 30, 35]) {
+        const problem = problemOf(shelf, { targetG, market: () => table.foods })
+        for (const { portions, score } of findPairings(problem).pairings) {
+          for (const { food: lifted, deltaG, diaas, onShelf } of liftOptions(
+            portions,
+            liftContext(problem),
+          )) {
+            met++
+            expect(score.proteinG + (deltaG * lifted.per100g.proteinG) / 100).toBeGreaterThanOrEqual(
+              Math.min(targetG, score.proteinG) - 1e-6,
+            )
+            expect(diaas).toBeGreaterThan(score.diaas!)
+            const item = shelf.find(({ food: { id } }) => id === lifted.id)
+            expect(item !== undefined).toBe(onShelf)
+            const there = portions.find(({ food: { id } }) => id === lifted.id)?.grams ?? 0
+            expect(there + deltaG).toBeLessThanOrEqual(
+              Math.min(lifted.portionG.most, item?.onHandG ?? lifted.portionG.most) + 1e-9,
+            )
+            if (there === 0) expect(portions.map(({ food: { kin } }) => kin)).not.toContain(lifted.kin)
+          }
+        }
+      }
+    }
+    expect(met).toBeGreaterThan(5)
   })
 })
 
@@ -120,9 +159,39 @@ describe('why', () => {
     expect(words).toContain(`${Math.floor(score.diaas!)} %`)
   })
 
+  it('calls a food rich only in what it has in full and a partner lacks', () => {
+    const staveOf = new Map(STAVES.map(stave => [STAVE_NAMES[stave], stave]))
+    let met = 0
+    for (const targetG of [20, 25, 30, 35, 40, 45]) {
+      for (const { score, why } of findPairings(problemOf(GALLEY, { targetG, pairings: 6 })).pairings) {
+        for (const line of why) {
+          const [, name, rich, percent, short, lacks] =
+            /^(.+?): rich in (.+?) \((\d+)\), short of (.+?) \((\d+)\);/.exec(line) ?? []
+          if (name === undefined) continue
+          met++
+          const item = score.items.find(({ food: of }) => shortName(of) === name)!
+          const own = stavesOfPlate([{ food: item.food, grams: 100 }], pattern)!
+          expect(Math.floor(own[staveOf.get(rich!)!])).toBe(Number(percent))
+          expect(Number(percent)).toBeGreaterThanOrEqual(100)
+          expect(Math.floor(own[staveOf.get(short!)!])).toBe(Number(lacks))
+          expect(Number(lacks)).toBeLessThan(100)
+          const partners = score.items.filter(other => other !== item)
+          expect(
+            partners.some(other => {
+              const theirs = stavesOfPlate([{ food: other.food, grams: 100 }], pattern)!
+              return theirs[staveOf.get(rich!)!] < 100
+            }),
+          ).toBe(true)
+        }
+      }
+    }
+    expect(met).toBeGreaterThan(10)
+  })
+
   it('names foods as a cook would', () => {
     expect(shortName(food('lentils-red-dry'))).toBe('Red lentils')
     expect(shortName(food('rice-brown-boiled'))).toBe('Brown rice')
     expect(shortName(food('tahini'))).toBe('Tahini')
+    expect(shortName({ name: 'Beans, whole (black gram), boiled', state: 'boiled' })).toBe('Whole beans')
   })
 })
