@@ -21,10 +21,10 @@ export function helpPage({ columns }: State): Page {
   const rows: (string | [key: string, what: string])[] = [
     ['Tab', 'next screen, Shift+Tab the last;  Esc back;  Ctrl+C leave'],
     'shelf: letters find, signs act',
-    ['letters', 'find a food on the shelf, and in the table below it'],
+    ['letters', 'find a food here, and in the table below; or "2 cups oats"'],
     ['Enter', 'how much there is; or put a food of the table there'],
     ['!  .', 'use up, hold back (again: no mark);  @ use-by day'],
-    ['#  Del', 'take off the shelf;  <  > undo, do again (50 changes)'],
+    ['#  Del', 'take off the shelf;  <  > undo, do again (on all screens)'],
     ['=  /', 'look closer (staves, tiers, sources);  order of the list'],
     ['+  paste', 'a food from a packet;  a whole list, one food a line'],
     'bench: pairings follow every change',

@@ -9,10 +9,16 @@ import { plateView } from './views/plate-view.ts'
 import { shelfView } from './views/shelf-view.ts'
 import { spokenLines } from './views/spoken.ts'
 
+const SPOKEN_COLUMNS = 120
+
 /** The screen as lines: drawn from the state alone. */
 export function view(state: State, knowledge: Knowledge): string[] {
-  const lines = screenOf(state, knowledge)
-  return state.spoken ? spokenLines(state, lines) : lines
+  if (!state.spoken) return screenOf(state, knowledge)
+  // Nothing need be cut to fit columns where lines are listened to.
+  return spokenLines(
+    state,
+    screenOf({ ...state, columns: Math.max(state.columns, SPOKEN_COLUMNS) }, knowledge),
+  )
 }
 
 function screenOf(state: State, knowledge: Knowledge): string[] {
@@ -50,7 +56,7 @@ function pageView(state: State): string[] {
     state,
     [` ${STYLE.bold(clip(page.title, state.columns - 30))}${STYLE.dim(more)}`],
     shown.map(line => ` ${narrowed(line, state.columns - 2)}`),
-    ['', ...keyLines({ ...state, rows: 0 }, keys)],
+    ['', ...keyLines(state, keys)],
   )
 }
 

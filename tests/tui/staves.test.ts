@@ -1,5 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
+import { scoreBasis } from '../../src/foods/score.ts'
 import {
   AMINO_ACIDS,
   profileOf,
@@ -9,12 +10,15 @@ import {
   stavesOf,
 } from '../../src/nutrition/amino-acids.ts'
 import type { Pattern } from '../../src/nutrition/pattern.ts'
+import { scorePlate } from '../../src/nutrition/plate-score.ts'
 import type { Portion, ProteinSource } from '../../src/nutrition/protein-source.ts'
 import { type Cell, cellsOf } from '../../src/tui/staves/cells.ts'
 import { drawStaves, stavesAsText, stavesSketch } from '../../src/tui/staves/draw-staves.ts'
+import { wholePercent } from '../../src/tui/staves/figures.ts'
 import { fillOf, letterOf } from '../../src/tui/staves/palette.ts'
 import { rowOf, scaleOf } from '../../src/tui/staves/scale.ts'
 import { stacksOf } from '../../src/tui/staves/stacks.ts'
+import { wholeScore } from '../../src/tui/text/figures.ts'
 import { widthOf, withoutStyles } from '../../src/tui/text/width.ts'
 import { knowledge } from './helpers.ts'
 
@@ -129,7 +133,7 @@ describe('the drawing', () => {
     expect(lys).toBeCloseTo((60 * 2 + 110) / 3, 9)
     const scale = scaleOf(9)
     expect(lines[9 - 1 - scale.row100]).toMatch(/^ {4}─.* 100$/)
-    expect(lines[9 - 1 - rowOf(lys, scale)]).toMatch(/^ {2}76≈.*≈$/)
+    expect(lines[9 - 1 - rowOf(lys, scale)]).toMatch(/^ {2}77≈.*≈$/)
     expect(lines[9]!.trim().split(/\s+/)).toEqual(
       STAVES.map(stave => STAVE_LABELS[stave] + (stave === 'lys' ? '*' : '')),
     )
@@ -137,11 +141,11 @@ describe('the drawing', () => {
       '110',
       '110',
       '110',
-      '76',
+      '77',
       '110',
       '110',
       '110',
-      '96',
+      '97',
       '110',
     ])
   })
@@ -190,7 +194,7 @@ describe('the drawing', () => {
     // 40 columns are 140 %.
     expect(lengthOf(lines[0]!)).toBe(Math.round((110 / 140) * 40))
     expect(lengthOf(lines[3]!)).toBe(Math.round((76.667 / 140) * 40))
-    expect(lines[3]).toMatch(/^Lys\* {2}76 .*≈ +│$/)
+    expect(lines[3]).toMatch(/^Lys\* {2}77 .*≈ +│$/)
   })
 
   it('draws nothing where there is no protein', () => {
@@ -204,10 +208,21 @@ describe('the drawing', () => {
   })
 })
 
+describe('figures', () => {
+  it('are rounded as the score is: the shortest stave is the DIAAS', () => {
+    for (const food of knowledge.table.foods.slice(0, 80)) {
+      const score = scorePlate([{ food, grams: 100 }], scoreBasis(knowledge.table, 'fao-2013-over-3y'))
+      if (score.staves === null) continue
+      expect(wholePercent(score.staves[score.limiting!])).toBe(wholeScore(score.diaas!))
+    }
+    expect(wholePercent(99.99)).toBe('99')
+  })
+})
+
 describe('the twins', () => {
   it('say the staves in words', () => {
     expect(stavesAsText({ ...flat(110), saa: 88.9 })).toBe(
-      'In % of the pattern: histidine 110, isoleucine 110, leucine 110, lysine 110, methionine + cysteine 88, phenylalanine + tyrosine 110, threonine 110, tryptophan 110, valine 110. Shortest: methionine + cysteine.',
+      'In % of the pattern: histidine 110, isoleucine 110, leucine 110, lysine 110, methionine + cysteine 89, phenylalanine + tyrosine 110, threonine 110, tryptophan 110, valine 110. Shortest: methionine + cysteine.',
     )
   })
   it('sketch them in nine letters, in their order', () => {

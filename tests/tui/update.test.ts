@@ -109,6 +109,60 @@ describe('shelf: letters find, signs act', () => {
   })
 })
 
+describe('amounts in the find line', () => {
+  it('are proposed for the food under the cursor, and put to what is there', () => {
+    const asks = typed(opened(), '2 cups red lentils', 'enter').state
+    expect(asks.prompt).toMatchObject({ text: '2 cups', for: { food: 'lentils-red-dry', adds: true } })
+    const { state } = typed(asks, 'enter')
+    const cup = knowledge.table.foodById
+      .get('lentils-red-dry')!
+      .measures.find(({ name }) => name === '1 cup')!
+    expect(state.shelf.items[0]!.grams).toBeCloseTo(900 + 2 * cup.grams, 6)
+  })
+
+  it('may hold a point or a slash, which else are signs', () => {
+    expect(typed(opened(), '1.5 cups oats').state.find).toBe('1.5 cups oats')
+    expect(typed(opened(), '1/2 cup oats').state.find).toBe('1/2 cup oats')
+    expect(typed(opened(), '.').state.shelf.items[0]!.mark).toBe('hold-back')
+  })
+
+  it('counted in pieces, are told in grams', () => {
+    const asks = typed(opened(EMPTY_SHELF), '3 eggs', 'enter').state
+    expect(asks.prompt!.text).toMatch(/^\d+ g$/)
+    expect(typed(asks, 'enter').state.shelf.items[0]!.grams).toBeGreaterThan(100)
+  })
+})
+
+describe('use-by days', () => {
+  it('are told in words, or taken off', () => {
+    const told = typed(opened(), '@', '3 days', 'enter').state
+    expect(told.shelf.items[0]!.useBy).toBe('2026-06-04')
+    expect(typed(told, '@', 'clear-line', 'none', 'enter').state.shelf.items[0]!.useBy).toBeNull()
+  })
+  it('that are none keep the line open, with what would do', () => {
+    const asks = typed(opened(), '@', '3/4', 'enter').state
+    expect(asks.prompt!.problem).toContain('2026-12-31')
+    expect(asks.shelf).toEqual(GALLEY)
+  })
+})
+
+describe('pastes', () => {
+  it('of nothing are no list', () => {
+    const { state } = typed(opened(), { key: 'paste', text: ' \n \n' })
+    expect(state.pasted).toBeNull()
+    expect(state.message).not.toBe('')
+  })
+  it('of one line go to the find line', () => {
+    expect(typed(opened(), { key: 'paste', text: '2 cups oats\n' }).state.find).toBe('2 cups oats')
+  })
+  it('that are too long say how many lines are left', () => {
+    const text = Array.from({ length: 305 }, () => '100 g oats').join('\n')
+    const { state } = typed(opened(), { key: 'paste', text })
+    expect(state.pasted).toHaveLength(300)
+    expect(state.message).toContain('other 5')
+  })
+})
+
 describe('a food from a packet', () => {
   it('is asked for step by step, and kept', () => {
     const { state, effects } = typed(
@@ -173,6 +227,23 @@ describe('bench', () => {
       knowledge,
     )
     expect(late.state.answer).toBe(bench.answer)
+  })
+
+  it('waits in sight for a late answer: the last one dimmed, the spinner turning', () => {
+    const asks = typed(bench, 'e').state
+    const at = (state: typeof asks) => view(state, knowledge)
+    expect(plain(at(asks))).not.toContain('working it out')
+    const late = update(asks, { event: 'slow', question: asks.question }, knowledge).state
+    expect(plain(at(late))).toContain('working it out')
+    const food = bench.answer!.pairings[0]!.portions[0]!.food.name
+    expect(at(late).find(line => line.includes(food))).toSatisfy((line: string) =>
+      line.startsWith('\u001b[2m'),
+    )
+    const turned = update(late, { event: 'tick' }, knowledge).state
+    expect(plain(at(turned))).not.toBe(plain(at(late)))
+    // An old question's lateness is none of the new one's.
+    expect(update(asks, { event: 'slow', question: asks.question - 1 }, knowledge).state).toBe(asks)
+    expect(update(bench, { event: 'tick' }, knowledge).state).toBe(bench)
   })
 
   it('keeps settings within bounds, with the reason', () => {
@@ -251,6 +322,21 @@ describe('plate', () => {
       before - used.grams,
       6,
     )
+  })
+
+  it('once served is cleared, shows what was served today, and can be had back', () => {
+    const { state } = typed(plate, 's', 'y')
+    expect(state.plate).toEqual([])
+    expect(plain(view(state, knowledge))).toMatch(/Served today:\n +1 x .* g /)
+    expect(typed(state, 'z').state.plate).toEqual(plate.plate)
+  })
+
+  it('undoes and does again from every screen', () => {
+    for (const screen of ['shelf', 'bench', 'plate'] as const) {
+      const { effects } = typed({ ...plate, screen }, '<', '>')
+      expect(effects.map(({ effect }) => effect)).toEqual(['undo', 'redo'])
+    }
+    expect(typed(typed(plate, 's').state, '<').effects).toEqual([])
   })
 
   it('makes a card, and refuses a time that is none', () => {

@@ -13,6 +13,8 @@ const SIZES = [
   [140, 45],
 ] as const
 
+const KEYS_AT_THE_END: Record<string, string> = { help: 'Esc back', prompt: 'Esc leave it' }
+
 describe('every screen, at every size', () => {
   const bench = answered(opened(GALLEY, { screen: 'bench', why: true }))
   const plate = typed(bench, 'enter').state
@@ -33,7 +35,8 @@ describe('every screen, at every size', () => {
         expect(lines.length).toBeLessThanOrEqual(rows - 1)
         for (const line of lines)
           expect(widthOf(line), `${name} ${columns}: ${plain([line])}`).toBeLessThanOrEqual(columns)
-        expect(plain(lines.slice(-1))).toContain('? all keys')
+        // While a line is typed, ? is a letter of it; on a page any key goes back.
+        expect(plain(lines.slice(-1))).toContain(KEYS_AT_THE_END[name] ?? '? all keys')
       }
     },
   )
@@ -63,12 +66,72 @@ describe('every screen, at every size', () => {
     expect(plain(lines)).not.toContain('\u001b')
     const wide = typed(opened({ items: [item('mung-beans-dry', 500)] }), '豆豆豆').state
     for (const line of view(wide, knowledge)) expect(widthOf(line)).toBeLessThanOrEqual(80)
+    // Names in Chinese, Japanese, Tamil and Hindi, and one with combining marks: the columns after them stand in line.
+    const names = ['鷹嘴豆,乾', 'ひよこ豆・乾燥', 'கொண்டைக்கடலை', 'काबुली चना', 'pois chiche\u0301s']
+    const tofu = knowledge.table.foodById.get('tofu-firm')!
+    const foods = names.map((name, i) => ({ ...tofu, id: `named-${i}`, name }))
+    const foodById = new Map([...knowledge.table.foodById, ...foods.map(food => [food.id, food] as const)])
+    const shelf = { items: foods.map(({ id }) => item(id, 500)) }
+    const rows = view(opened(shelf), { ...knowledge, table: { ...knowledge.table, foodById } }).slice(3, 8)
+    expect(rows).toHaveLength(names.length)
+    expect(new Set(rows.map(line => widthOf(line.slice(0, line.indexOf('500 g'))))).size).toBe(1)
+    expect(new Set(rows.map(line => widthOf(line))).size).toBe(1)
+  })
+
+  it('tells the screen and the cursor without styles', () => {
+    expect(plain(view(opened(), knowledge))).toContain('▸ shelf ')
+    expect(plain(view(bench, knowledge))).toContain('▸ bench ')
+    expect(plain(view(plate, knowledge))).toContain('▸ plate')
+  })
+
+  it('shows every key of a screen on its key lines at 100 by 30', () => {
+    for (const [state, keys] of [
+      [opened(), 'Tab Enter ! . # @ = < / + ?'],
+      [bench, 'Enter w c t n k a e d l b u p Tab ?'],
+      [plate, '←→ Enter a x 1-3 z s c f n Tab ?'],
+    ] as const) {
+      const lines = plain(view({ ...state, columns: 100, rows: 30 }, knowledge).slice(-2))
+      for (const key of keys.split(' ')) expect(` ${lines}`).toContain(` ${key} `)
+    }
+  })
+
+  it('shows the staves beside the list in a wide window', () => {
+    for (const state of [opened(), bench, plate]) {
+      const lines = view({ ...state, columns: 140, rows: 45 }, knowledge)
+      expect(plain(lines)).toMatch(/His +Ile +Leu/)
+    }
+    expect(plain(view({ ...opened(), columns: 100, rows: 30 }, knowledge))).not.toMatch(/His +Ile/)
   })
 
   it('gives words instead of drawings to a screen reader', () => {
     const words = plain(view({ ...plate, spoken: true }, knowledge))
     expect(words).toContain('In % of the pattern: histidine')
     expect(words).not.toContain('█a')
+  })
+
+  it('draws nothing for a screen reader that would be read out as boxes', () => {
+    for (const state of Object.values(screens)) {
+      const lines = view({ ...state, spoken: true }, knowledge)
+      expect(lines.join('\n')).not.toMatch(/[\u2500-\u25ff≈·]/)
+      expect(lines.join('')).not.toContain('\u001b')
+      for (const line of lines) expect(line).not.toMatch(/^\s*$| {2}/)
+      expect(lines.length).toBeLessThan(state.rows)
+    }
+    const shelf = view({ ...opened(), spoken: true }, knowledge).join('\n')
+    expect(shelf).toContain('Now on: shelf')
+    expect(shelf).toContain('use by: 2 d, ')
+    expect(shelf).toMatch(/Here: Lentils, red, dry, 900 g, \d+ g protein, shortest \w+ \d+/)
+  })
+
+  it('never cuts a grave caution or the allergens, however small the window', () => {
+    const beans = { food: knowledge.table.foodById.get('kidney-beans-dry')!, grams: 60 }
+    const full = [beans, ...plate.plate.slice(0, 2)]
+    for (const [columns, rows] of SIZES.slice(1)) {
+      const words = plain(view({ ...plate, columns, rows, plate: full }, knowledge)).replace(/\s+/g, ' ')
+      expect(words).toContain('Allergens:')
+      // Beside the staves its words stand between other lines; there it is enough that it begins and ends.
+      expect(words).toMatch(columns < 124 ? /boil hard in fresh water for 30 min/ : /kidney beans: soak/i)
+    }
   })
 
   it('shows allergens and the caution that weighs most on the plate', () => {

@@ -1,2 +1,4 @@
-/** A percentage as a whole number, never rounded up to more than it is. */
-export const wholePercent = (value: number): string => String(Math.floor(value + 1e-9))
+import { wholeScore } from '../text/figures.ts'
+
+/** A stave in whole per cent, rounded as the score is, so that the shortest stave and the DIAAS are one figure. */
+export const wholePercent = (value: number): string => wholeScore(value)

@@ -52,7 +52,7 @@ function lettered(state: State, letter: string, knowledge: Knowledge): Updated {
     )
   if (/^[1-9]$/.test(letter)) {
     const at = Number(letter) - 1
-    return only(at < (state.answer?.pairings.length ?? 0) ? { ...state, chosen: at } : state)
+    return only(at < (state.answer?.pairings.length ?? 0) ? { ...state, chosen: at, message: '' } : state)
   }
   switch (letter) {
     case 't':

@@ -187,6 +187,9 @@ function serveAnswered(state: State, key: Key, knowledge: Knowledge): Updated {
     shelf: result.shelf,
     sample: false,
     served: [...state.served, plate],
+    plate: [],
+    plateCursor: 0,
+    before: [...state.before, state.plate],
     message: `Served: ${servings} ${servings === 1 ? 'serving' : 'servings'} off the shelf, kept under today; < undoes it.`,
   }
   return asked(next, knowledge, { effect: 'serve', plate, takes, sample })

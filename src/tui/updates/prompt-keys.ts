@@ -110,7 +110,7 @@ function amountOf(text: string, food: Food, { finder }: Knowledge): number | str
   if (reading.ok) return reading.grams
   const again = readPortion(text, finder)
   if (again.ok && again.food.id === food.id) return again.grams
-  return reading.problem
+  return reading.problem.replace(` ${food.id}`, '')
 }
 
 type SettingName = Extract<Prompt['for'], { what: 'setting' }>['setting']

@@ -5,6 +5,7 @@ import type { Pairing } from '../../pairing/problem.ts'
 import { targetOf } from '../problem-of.ts'
 import type { State } from '../state.ts'
 import { drawStaves, stavesAsText, stavesSketch } from '../staves/draw-staves.ts'
+import { wholePercent } from '../staves/figures.ts'
 import { inFoodColour, letterOf } from '../staves/palette.ts'
 import { STYLE } from '../style.ts'
 import { diaasText, grams, kcal, shortDiaas, signed, wholeScore } from '../text/figures.ts'
@@ -118,7 +119,16 @@ function bodyOf(state: State, columns: number, colour: boolean, room: number): s
     lines.length + before.slice(first, state.chosen + 1).reduce((a, b) => a + b, 0) > room
   )
     first++
-  lines.push(...blocks.slice(first).flat())
+  let end = first
+  let rows = lines.length
+  while (end < blocks.length && (end === first || rows + blocks[end]!.length - 1 <= room)) {
+    rows += blocks[end]!.length
+    end++
+  }
+  lines.push(...blocks.slice(first, end).flat())
+  // The empty line after the last block says how many there are below.
+  const below = blocks.length - end
+  if (below > 0 && lines.length <= room) lines[lines.length - 1] = STYLE.dim(`   ↓ ${below} more`)
   return isWaiting(state) ? lines.map(line => STYLE.dim(withoutStyles(line))) : lines
 }
 
@@ -183,11 +193,8 @@ function sideBySide(a: Pairing, b: Pairing, columns: number, room: number): stri
     return [
       clip(diaasText(score), half),
       clip(`${score.proteinG.toFixed(1)} g protein, ${score.adjustedProteinG.toFixed(1)} g adjusted`, half),
-      clip(
-        `${kcal(score.kcal)} · ${grams(score.grams)} on the plate · PDCAAS ${Math.round(score.pdcaas ?? 0)}`,
-        half,
-      ),
-      clip(`leucine ${score.leucineG.toFixed(1)} g · fibre ${score.fibreG.toFixed(0)} g`, half),
+      clip(`${kcal(score.kcal)} · ${grams(score.grams)} on the plate`, half),
+      clip(`PDCAAS ${Math.round(score.pdcaas ?? 0)} · leucine ${score.leucineG.toFixed(1)} g`, half),
       ...(score.staves === null ? [] : STAVES.map(stave => staveLine(score, stave, half))),
     ]
   }
@@ -212,5 +219,5 @@ function staveLine(score: PlateScore, stave: Stave, width: number): string {
   const room = width - 10
   const bar = '▇'.repeat(Math.max(0, Math.min(room, Math.round((value / 140) * room))))
   const name = `${STAVE_LABELS[stave]}${stave === score.limiting ? '*' : ' '}`
-  return `${name} ${String(Math.floor(value + 1e-9)).padStart(4)} ${bar}`
+  return `${name} ${wholePercent(value).padStart(4)} ${bar}`
 }

@@ -32,25 +32,32 @@ export function topLine(state: State, right: string): string {
 
 /**
  * The lines at the bottom: what works here, the most used first. Two lines where the window is high enough; keys that
- * don't fit all the same go, the last first, but never `?`.
+ * don't fit all the same go, the last first, but never `?`, where it works.
  */
-export function keyLines({ columns, rows }: State, keys: readonly KeyName[]): string[] {
-  const help: KeyName = ['?', 'all keys']
-  const most = rows >= TWO_KEY_LINES_FROM ? 2 : 1
-  const lines = fill(columns, most, keys, help)
+export function keyLines(state: State, keys: readonly KeyName[]): string[] {
+  const most = state.rows >= TWO_KEY_LINES_FROM && state.page === null ? 2 : 1
+  const lines = fill(state.columns, most, keys, helpWorks(state) ? [['?', 'all keys']] : [])
   return lines.map(
     line => ` ${line.map(([key, what]) => `${STYLE.bold(key)} ${STYLE.dim(what)}`).join('   ')}`,
   )
 }
 
-function fill(columns: number, most: number, keys: readonly KeyName[], help: KeyName): KeyName[][] {
+const helpWorks = ({ prompt, page, pasted, asksServe }: State): boolean =>
+  prompt === null && page === null && pasted === null && !asksServe
+
+function fill(
+  columns: number,
+  most: number,
+  keys: readonly KeyName[],
+  always: readonly KeyName[],
+): KeyName[][] {
   const widthOfKey = ([key, what]: KeyName) => widthOf(key) + widthOf(what) + 4
+  const kept = always.reduce((sum, entry) => sum + widthOfKey(entry), 0)
   const lines: KeyName[][] = [[]]
   let width = 0
   for (const entry of keys) {
     const last = lines.length === most
-    const room = columns + 1 - (last ? widthOfKey(help) : 0)
-    if (width + widthOfKey(entry) > room) {
+    if (width + widthOfKey(entry) > columns + 1 - (last ? kept : 0)) {
       if (last) break
       lines.push([])
       width = 0
@@ -58,8 +65,8 @@ function fill(columns: number, most: number, keys: readonly KeyName[], help: Key
     lines.at(-1)!.push(entry)
     width += widthOfKey(entry)
   }
-  if (width + widthOfKey(help) > columns + 1) lines.push([])
-  lines.at(-1)!.push(help)
+  if (width + kept > columns + 1) lines.push([])
+  lines.at(-1)!.push(...always)
   return lines
 }
 

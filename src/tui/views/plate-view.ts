@@ -7,9 +7,10 @@ import { type PlateScore, scorePlate } from '../../nutrition/plate-score.ts'
 import { liftsOf, targetOf } from '../problem-of.ts'
 import type { Knowledge, State } from '../state.ts'
 import { drawStaves, stavesAsText, stavesSketch } from '../staves/draw-staves.ts'
+import { wholePercent } from '../staves/figures.ts'
 import { foodSign } from '../staves/palette.ts'
 import { STYLE } from '../style.ts'
-import { diaasText, grams, kcal, signed, wholeScore } from '../text/figures.ts'
+import { diaasText, grams, kcal, shortDiaas, signed, wholeScore } from '../text/figures.ts'
 import { clip, padEnd, padStart, wrapLines } from '../text/lines.ts'
 import {
   beside,
@@ -111,7 +112,7 @@ function chartLines(
   if (height < STAVES_ROWS.least) {
     const figures = STAVES.map(
       stave =>
-        `${STAVE_LABELS[stave]}${stave === score.limiting ? '*' : ''} ${Math.floor(staves[stave] + 1e-9)}`,
+        `${STAVE_LABELS[stave]}${stave === score.limiting ? '*' : ''}\u00a0${wholePercent(staves[stave])}`,
     )
     return wrapLines(` ${stavesSketch(staves)}  ${figures.join('  ')}`, state.columns - 1, 12).slice(
       0,
@@ -214,6 +215,7 @@ function keysOf(state: State): readonly KeyName[] {
   if (state.plate.length === 0)
     return [
       ['a', 'add a food'],
+      ...(state.before.length === 0 ? [] : [['z', 'the plate before'] as const]),
       ['Esc', 'bench'],
       ['Tab', 'shelf'],
     ]
@@ -239,20 +241,30 @@ function emptyLines(state: State, knowledge: Knowledge): string[] {
     '',
     '   Take a pairing from the bench (Esc), or press a to put a food on it.',
     ...todayLines(state, knowledge),
-  ].map(line => clip(line, state.columns - 1))
+  ].flatMap(line => wrapLines(line, state.columns - 1, 7))
 }
 
-/** What was served today. */
-function todayLines({ served }: State, { today, table }: Knowledge): string[] {
+/** What was served today, each plate with its protein and score. */
+function todayLines({ served, settings }: State, { today, table }: Knowledge): string[] {
   const plates = served.filter(({ day }) => day === today)
   if (plates.length === 0) return []
-  const name = (id: string) => table.foodById.get(id)?.name ?? id
+  const basis = scoreBasis(table, settings.pattern)
   return [
     '',
     '   Served today:',
-    ...plates.map(
-      ({ servings, portions }) =>
-        `   ${servings} x ${portions.map(({ food, grams: g }) => `${grams(g)} ${name(food)}`).join(', ')}`,
-    ),
+    ...plates.flatMap(({ servings, portions }) => {
+      const known = portions.flatMap(({ food: id, grams: g }) => {
+        const food = table.foodById.get(id)
+        return food === undefined ? [] : [{ food, grams: g }]
+      })
+      const score = scorePlate(known, basis)
+      const foods = known.map(({ food, grams: g }) => `${grams(g)} ${food.name}`).join(', ')
+      return [
+        `   ${servings} x ${foods}`,
+        STYLE.dim(
+          `     a serving: ${score.proteinG.toFixed(0)} g protein · ${shortDiaas(score)} · ${kcal(score.kcal)}`,
+        ),
+      ]
+    }),
   ]
 }

@@ -5,6 +5,7 @@ import { shortestStave, stavesOfPlate } from '../../nutrition/staves.ts'
 import { type ShelfRow, shelfRows } from '../rows.ts'
 import type { Knowledge, State } from '../state.ts'
 import { stavesSketch } from '../staves/draw-staves.ts'
+import { wholePercent } from '../staves/figures.ts'
 import { STYLE } from '../style.ts'
 import { grams } from '../text/figures.ts'
 import { clip, padEnd, padStart } from '../text/lines.ts'
@@ -83,7 +84,7 @@ function emptyLines(state: State): string[] {
   if (state.find !== '')
     return [
       `   No food is called "${clip(state.find, 40)}" or nearly so.`,
-      '   A shorter or plainer word may do.',
+      '   A shorter or plainer word may do; + takes what the label of a packet says.',
     ]
   return [
     '   The shelf is empty.',
@@ -144,7 +145,8 @@ function rowLine(
   // What the cook leaves out is never proposed, and is marked wherever it is found.
   const mark =
     avoided.length > 0 ? `× ${avoided[0]}`.slice(0, 9) : row.kind === 'here' ? MARKS[row.item.mark] : ''
-  const days = row.kind === 'here' ? daysText(row.item.useBy, knowledge.today) : ''
+  const left = row.kind === 'here' ? daysText(row.item.useBy, knowledge.today) : ''
+  const days = state.spoken && left !== '' ? `  use by: ${left}` : left
   const protein =
     food === null
       ? ''
@@ -205,5 +207,5 @@ function sketchOf(food: Food, { settings, spoken }: State, { table }: Knowledge)
 /** The shortest stave alone, for a list that is listened to. */
 function inWords(staves: Staves): string {
   const shortest = shortestStave(staves)
-  return `shortest ${STAVE_LABELS[shortest]} ${Math.floor(staves[shortest])}`
+  return `  shortest ${STAVE_LABELS[shortest]} ${wholePercent(staves[shortest])}`
 }

@@ -14,6 +14,7 @@ export function spokenLines({ columns, rows }: State, lines: readonly string[]):
         .replace(/←→/g, 'Left, Right')
         .replace(/↑↓/g, 'Up, Down')
         .replace(/▸ ?(?=shelf|bench|plate)/, 'Now on: ')
+        .replace(/^ > ?/, 'Typed: ')
         .replace(/▸ */, 'Here: ')
         .replace(/✓ /, 'Understood: ')
         .replace(/✗ /, 'Not understood: ')
