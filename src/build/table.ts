@@ -23,12 +23,28 @@ function fail(lines: readonly string[]): never {
   process.exit(1)
 }
 
-const { table, problems } = compileTable(readInputs())
-if (problems.length > 0) fail([...problems, `${problems.length} problems; the table is not written`])
-const outputs: [path: string, text: string][] = [
-  ['data/foods.json', tableJson(table)],
-  ['data/kitchen.json', kitchenJson(compileKitchen(table.foods))],
-]
+/** The files that the build writes, and how many foods are in them. Throws, or ends with every problem in a line. */
+function compileAll(): { outputs: [path: string, text: string][]; foodCount: number } {
+  const { table, problems } = compileTable(readInputs())
+  if (problems.length > 0) fail([...problems, `${problems.length} problems; the table is not written`])
+  return {
+    outputs: [
+      ['data/foods.json', tableJson(table)],
+      ['data/kitchen.json', kitchenJson(compileKitchen(table.foods))],
+    ],
+    foodCount: table.foods.length,
+  }
+}
+
+function compiledOrFail() {
+  try {
+    return compileAll()
+  } catch (error) {
+    return fail([(error as Error).message])
+  }
+}
+
+const { outputs, foodCount } = compiledOrFail()
 const check = process.argv.includes('--check')
 for (const [path, text] of outputs) {
   const file = new URL(`../../${path}`, import.meta.url)
@@ -37,4 +53,4 @@ for (const [path, text] of outputs) {
     fail([`${path} is not what the build writes; run npm run data and commit the change`])
   if (!check) writeFileSync(file, text)
 }
-console.log(`${table.foods.length} foods ${check ? 'are what the build writes' : 'compiled'}`)
+console.log(`${foodCount} foods ${check ? 'are what the build writes' : 'compiled'}`)

@@ -20,7 +20,7 @@ const sound = foods.find(({ id }) => id === 'lentils-brown-dry')!
 
 /** What the build says of the real inputs with one row of a file changed. */
 function problemsWith(
-  file: 'foods' | 'exceptions' | 'digestibility' | 'uncertainty' | 'patterns' | 'measures',
+  file: 'foods' | 'exceptions' | 'digestibility' | 'uncertainty' | 'patterns' | 'measures' | 'phytate',
   at: number,
   changes: Record<string, string>,
 ): string[] {
@@ -66,6 +66,21 @@ describe('a row that cannot be is refused, with where it stands', () => {
     expect(problemsWith('digestibility', 0, { why: '' }).join()).toMatch(/needs its reason/)
   })
 
+  it('a measure of an unknown source or without an amount, and phytate of no food', () => {
+    expect(problemsWith('measures', 0, { source: 'hearsay' }).join()).toMatch(/"hearsay" is not in sources/)
+    expect(problemsWith('measures', 0, { measure: 'cup' }).join()).toMatch(/needs an amount first/)
+    expect(problemsWith('phytate', 0, { food: 'kin:moonbeam' }).join()).toMatch(/no food and no kin/)
+  })
+
+  it('a mixed profile without a share, which would drop the food without a word', () => {
+    const changes = { profile: 'mix:sr26:16069*0.5+sr26:16052' }
+    expect(problemsWith('foods', rowOf('lentils-brown-dry'), changes).join()).toMatch(/has no share/)
+  })
+
+  it('a file that is no CSV, by its name and line', () => {
+    expect(() => rowsOf('id,name\na,b,c\n', 'foods-x.csv')).toThrow(/foods-x\.csv: .*line 2/)
+  })
+
   it('an exception that excuses nothing, a coefficient without a reason, a measure of no weight, a pattern without lysine', () => {
     expect(problemsWith('exceptions', 0, { food: 'tofu-firm', rule: 'energy' }).join('\n')).toMatch(
       /excuses nothing/,
@@ -82,6 +97,9 @@ describe('every rule fires on a food that breaks it, and on no other', () => {
     'amino-sum': food => ({ ...food, aminoMgPerG: { ...food.aminoMgPerG, leu: 700 } }),
     'proximate-sum': food => ({ ...food, per100g: { ...food.per100g, waterG: 40 } }),
     energy: food => ({ ...food, per100g: { ...food.per100g, kcal: 900 } }),
+    minerals: food => ({ ...food, per100g: { ...food.per100g, potassiumMg: 9000 } }),
+    'vitamin-b12': food => ({ ...food, per100g: { ...food.per100g, vitaminB12Ug: 540 } }),
+    brand: food => ({ ...food, aliases: ['LENTILCO red'] }),
     portion: food => ({ ...food, portionG: { least: 50, usual: 20, most: 100 } }),
     'related-species-note': food => ({ ...food, doubts: ['related-species'], note: '' }),
     'estimated-note': food => ({ ...food, profileTier: 'estimated', note: '' }),
@@ -127,6 +145,10 @@ describe('profiles on one basis', () => {
     expect(
       profile('a,x,mg_per_g_protein,,,20,40,70,,20,20,50,30,30,11,50,b,', donor).problems.join(),
     ).toMatch(/lys is missing/)
+    const asking = 'b,x,mg_per_g_protein,,,20,40,70,30,20,20,50,30,30,,50,a,'
+    expect(
+      profile('a,x,mg_per_g_protein,,,20,40,70,30,20,20,50,30,30,,50,b,', asking).problems.join(),
+    ).toMatch(/trp is missing/)
     expect(profile('a,x,pounds,,,20,40,70,30,20,20,50,30,30,11,50,,').problems.join()).toMatch(
       /unit is "pounds"/,
     )
@@ -153,6 +175,15 @@ describe('compositions', () => {
     expect(boiled.per100g.waterG).toBeCloseTo(100 - 90 / 2.5, 9)
     expect(boiled.per100g.zincMg).toBeNull()
   })
+  // Figures as printed in USDA SR28; a slipped column would show in some of them.
+  it.each([
+    ['01077', { vitaminB12Ug: 0.45, calciumMg: 113, sodiumMg: 43, potassiumMg: 132, fatG: 3.25 }],
+    ['01123', { vitaminB12Ug: 0.89, proteinG: 12.56, ironMg: 1.75, zincMg: 1.29, fibreG: 0 }],
+    ['11124', { vitaminB12Ug: 0, carbohydrateG: 9.58, fibreG: 2.8, potassiumMg: 320, ashG: 0.97 }],
+    ['12220', { kcal: 534, waterG: 6.96, magnesiumMg: 392, fibreG: 27.3, phytateMg: null }],
+  ])('takes each figure of %s from its own column', (number, figures) => {
+    expect(inputs.sr28.get(number)!.per100g).toMatchObject(figures)
+  })
   it('reads a line of the American files', () => {
     const abbrev = `~00001~^~BEANS~^${['10', '350', '25', '2', '4', '59', '15', '2', '100', '5', '120', '300', '1200', '8', '3'].join('^')}${'^'.repeat(31)}^~.25 cup~^${''}`
     const foods = parseSr28(abbrev, '~00001~^~1600~^~Beans, dry~^~~^~~^~~^~~^~~^0^~~^6.25^^^')
@@ -172,6 +203,10 @@ describe('compositions', () => {
     ['150', '1 cup, chopped', '1 cup, chopped', 150],
     ['14.2', '1 tablespoon', '1 tbsp', 14.2],
     ['114', '1 sweetpotato, 5" long', '1 sweetpotato', 114],
+    ['9', '10 leaves', '1 leaf', 0.9],
+    ['24.5', '5 grapes', '1 grape', 4.9],
+    ['13', '1 floweret', '1 floret', 13],
+    ['52', '1 unit', undefined, 0],
     ['', '1 cup', undefined, 0],
   ])('%s g as "%s"', (grams, description, name, g) => {
     expect(measureOf(grams, description)).toEqual(

@@ -21,6 +21,21 @@ describe('the table', () => {
     }
   })
 
+  it('is counted right where it is described', () => {
+    const read = (path: string) => readFileSync(new URL(`../../${path}`, import.meta.url), 'utf8')
+    const described = read('data/README.md')
+    const count = (pattern: RegExp) => Number(pattern.exec(described)?.[1])
+    const having = (tier: string) => foods.filter(food => food.profileTier === tier).length
+    expect(count(/`foods\.json` \((\d+) foods\)/)).toBe(foods.length)
+    expect(count(/`measured` \((\d+) foods\)/)).toBe(having('measured'))
+    expect(count(/`borrowed` \((\d+)\)/)).toBe(having('borrowed'))
+    expect(count(/`estimated` \((\d+)\)/)).toBe(having('estimated'))
+    expect(count(/most nuts: (\d+) foods/)).toBe(
+      foods.filter(food => food.digestibilityTier === 'class default').length,
+    )
+    expect(/\*\*Data\.\*\* (\d+) foods/.exec(read('README.md'))?.[1]).toBe(String(foods.length))
+  })
+
   it('names no brand', () => {
     // Descriptions of the American table write brands in capitals.
     for (const { name, aliases } of foods)

@@ -82,14 +82,14 @@ describe('every food of the table', () => {
 
 test.each([
   ...[
-    'chapati',
+    'dosa',
     'muesli',
     'granola',
-    'bagel',
+    'croissant',
     'salmon',
     'marmite',
     'oat flour',
-    'oat milk',
+    'hazelnut milk',
     'lentil soup',
     'kimchi',
   ],
@@ -99,7 +99,7 @@ test.each([
     'roasted chickpeas',
     'boiled egg white',
     'seeds',
-    'butter',
+    'margarine',
     'juice',
     'e',
     'pe',

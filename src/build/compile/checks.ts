@@ -45,6 +45,20 @@ const RULES: Record<string, (food: Food) => string | false> = {
       `${round(kcal)} kcal, but the macronutrients give ${round(least)} to ${round(most)}`
     )
   },
+  // What is left when food burns holds all of its metals, so they cannot outweigh it.
+  minerals: ({ per100g: { ashG, calciumMg, ironMg, magnesiumMg, potassiumMg, sodiumMg, zincMg } }) => {
+    if (ashG === null) return false
+    const mg = [calciumMg, ironMg, magnesiumMg, potassiumMg, sodiumMg, zincMg]
+    const metalsG = mg.reduce<number>((sum, value) => sum + (value ?? 0), 0) / 1000
+    return (
+      metalsG > 1.05 * ashG + 0.15 && `the minerals are ${round(metalsG)} g, but the ash ${round(ashG)} g`
+    )
+  },
+  // Clams and liver, the richest foods known, hold just under 100 ug.
+  'vitamin-b12': ({ per100g: { vitaminB12Ug } }) =>
+    vitaminB12Ug !== null &&
+    vitaminB12Ug > 100 &&
+    `${round(vitaminB12Ug)} ug of vitamin B12 in 100 g; no food holds so much`,
   portion: ({ portionG: { least, usual, most } }) =>
     (least > usual || usual > most) &&
     `portions must be least <= usual <= most, not ${least}, ${usual}, ${most}`,
@@ -54,6 +68,10 @@ const RULES: Record<string, (food: Food) => string | false> = {
     'a profile of another species needs a note that says whose',
   'estimated-note': ({ profileTier, note }) =>
     profileTier === 'estimated' && note === '' && 'an estimated profile needs a note that says why',
+  // The American table writes brands in capitals.
+  brand: ({ name, aliases }) =>
+    [name, ...aliases].some(text => /\b[A-Z]{5,}\b/.test(text)) &&
+    'a name or alias in capitals looks like a brand; leave brands out',
   text: ({ name, aliases, firstFor, note }) =>
     // biome-ignore lint/suspicious/noControlCharactersInRegex: that is what is looked for
     [name, note, ...aliases, ...firstFor].some(text => /[\u0000-\u001f\u007f-\u009f®™©]/.test(text)) &&

@@ -56,8 +56,8 @@ export function compileTable(inputs: TableInputs): { table: TableFile; problems:
     ]),
   )
   const excused = excuses(inputs.exceptions, byId, problems)
-  const measures = measuresByFood(inputs.measures, byId, problems)
-  const phytate = phytateByKey(inputs.phytate, problems)
+  const measures = measuresByFood(inputs.measures, byId, sourceRows, problems)
+  const phytate = phytateByKey(inputs.phytate, byId, problems)
   const known = { sr28: inputs.sr28, ifct: inputs.ifct, own, foods: byId }
 
   const compiled: Food[] = []
@@ -173,6 +173,7 @@ function excuses(rows: readonly Row[], foods: Map<string, Row>, problems: Proble
 function measuresByFood(
   rows: readonly Row[],
   foods: Map<string, Row>,
+  sources: Map<string, Row>,
   problems: Problems,
 ): Map<string, Measure[]> {
   const byFood = new Map<string, Measure[]>()
@@ -180,6 +181,9 @@ function measuresByFood(
     const { food = '', measure = '', source = '' } = row.text
     const grams = numberOf(row, 'grams', problems)
     if (!foods.has(food)) problems.add(row.where, `there is no food "${food}"`)
+    if (!sources.has(source)) problems.add(row.where, `source "${source}" is not in sources.csv`)
+    if (!/^[\d/.]+ \S/.test(measure))
+      problems.add(row.where, `measure "${measure}" needs an amount first, such as "1 cup"`)
     if (grams === null || !(grams > 0)) problems.add(row.where, 'grams must be above 0')
     else byFood.set(food, [...(byFood.get(food) ?? []), { name: measure, grams, source }])
   }
@@ -193,9 +197,16 @@ function mergedMeasures(dataset: readonly Measure[], curated: readonly Measure[]
   return [...merged.values()]
 }
 
-function phytateByKey(rows: readonly Row[], problems: Problems): Map<string, number> {
+function phytateByKey(
+  rows: readonly Row[],
+  foods: Map<string, Row>,
+  problems: Problems,
+): Map<string, number> {
+  const keys = new Set([...foods.values()].flatMap(({ text }) => [text.id ?? '', `kin:${text.kin}`]))
   const byKey = new Map<string, number>()
   for (const row of rows) {
+    if (!keys.has(row.text.food ?? ''))
+      problems.add(row.where, `"${row.text.food}" is no food and no kin: of the table`)
     const mg = numberOf(row, 'mg_per_100g', problems)
     if (mg !== null) byKey.set(row.text.food ?? '', mg)
   }

@@ -36,7 +36,9 @@ export function profileFromRow(row: Row, rows: Map<string, Row>, problems: Probl
     const value = numberOf(row, a, problems)
     if (value !== null && value > 0) return value * toMgPerG
     const donor = a === 'trp' && trpFrom !== '' ? rows.get(trpFrom) : undefined
-    const donated = donor === undefined ? null : profileFromRow(donor, rows, problems)
+    // A donor must hold its own, so that two rows cannot ask each other for ever.
+    const holdsOwn = donor !== undefined && (donor.text.trp ?? '') !== ''
+    const donated = holdsOwn ? profileFromRow(donor, rows, problems) : null
     if (donated !== null) return donated.mgPerG.trp
     problems.add(where, `${a} is missing; give it, or for tryptophan name a profile in trp_from`)
     return 0
@@ -68,7 +70,9 @@ export function resolveProfile(
   if (kind === 'mix') {
     const parts = rest.split('+').map(part => {
       const [id = '', share = ''] = splitOnce(part.trim(), '*')
-      return { profile: resolveProfile(id, known, where, problems), crudeG: Number(share) }
+      if (!(Number(share) > 0))
+        problems.add(where, `profile "${expression}": "${part}" has no share; give ID*SHARE`)
+      return { profile: resolveProfile(id.trim(), known, where, problems), crudeG: Number(share) }
     })
     const complete = parts.flatMap(({ profile, crudeG }) =>
       profile !== null && crudeG > 0 ? [{ profile, crudeG }] : [],

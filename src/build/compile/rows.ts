@@ -7,12 +7,14 @@ export interface Row {
   text: Record<string, string>
 }
 
-/** The rows of a CSV text whose first line is the header. `file` names it in messages. */
+/** The rows of a CSV text whose first line is the header. `file` names it in messages. Throws where it is no CSV. */
 export function rowsOf(csv: string, file: string): Row[] {
-  const records = parse(csv, { columns: true, skip_empty_lines: true, bom: true, trim: true }) as Record<
-    string,
-    string
-  >[]
+  let records: Record<string, string>[]
+  try {
+    records = parse(csv, { columns: true, skip_empty_lines: true, bom: true, trim: true })
+  } catch (error) {
+    throw new Error(`${file}: ${(error as Error).message}; mend the commas and quotes of that line`)
+  }
   return records.map((text, i) => ({ where: `${file}, row ${i + 2}`, text }))
 }
 

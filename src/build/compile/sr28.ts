@@ -16,7 +16,7 @@ const COLUMN = {
   potassiumMg: 14,
   sodiumMg: 15,
   zincMg: 16,
-  vitaminB12Ug: 32,
+  vitaminB12Ug: 31,
   phytateMg: -1,
 } as const
 const FIRST_MEASURE = 48
@@ -57,7 +57,7 @@ export function parseSr28(
 
 /** Words that make a measure useless to a cook, or that name a pack. */
 const USELESS =
-  /serving|package|pkg|container|oz\b|lb\b|cubic|nlea|yield|bunch|recipe|quart|as purchased|excludes|portion|pouch|box|bottle/i
+  /serving|package|pkg|container|oz\b|lb\b|cubic|nlea|yield|bunch|recipe|quart|as purchased|excludes|portion|pouch|box|bottle|^unit/i
 
 /** `.25 cup` weighing 28 g is `1 cup` of 112 g; measures that a kitchen has no use for are left out. */
 export function measureOf(grams: string | undefined, description: string | undefined): Measure[] {
@@ -75,7 +75,10 @@ export function measureOf(grams: string | undefined, description: string | undef
     .replace(/,? *[\d/-]*".*$/, '')
     .replace(/\s+/g, ' ')
     .replace(/[\s,]+$/, '')
-    .replace(/^(slice|spear|pod|sprout|cup|piece|fruit)s\b/, '$1')
+    .replace(/^(slice|spear|pod|sprout|cup|piece|fruit|beet|grape|bean|cake|mushroom)s\b/, '$1')
+    .replace(/^leaves\b/, 'leaf')
+    .replace(/^berries\b/, 'berry')
+    .replace(/^flowerets?\b/, 'floret')
     .trim()
   if (!(amount > 0) || USELESS.test(unit) || !/^[a-z]/.test(unit)) return []
   return [{ name: `1 ${unit}`, grams: Number((g / amount).toPrecision(4)), source: 'usda-sr28' }]
