@@ -36,7 +36,8 @@ export interface ComplementOptions {
 const WORTH = 1
 
 /**
- * What mends a food best, in what proportion by weight, in portions of both that a person would eat. The best of each
+ * What mends a food best, in what proportion by weight: a usual portion of the food or more, and of the partner what a
+ * person would eat. The best of each
  * role first; ties go to the proportion with least of the partner. Empty where nothing helps, or the food lacks nothing.
  */
 export function complementsOf(
@@ -85,7 +86,8 @@ export function complementsOf(
  */
 function complementOf(food: Candidate, partner: Candidate, pattern: Pattern): Complement {
   const least = partner.leastG / food.mostG
-  const most = partner.mostG / food.leastG
+  // The food that is mended stays what is eaten: a usual portion of it at the least.
+  const most = Math.max(least, partner.mostG / Math.max(food.leastG, food.food.portionG.usual))
   const ratios = [least, most]
   const cross = (numerator: number, denominator: number) => {
     const ratio = numerator / denominator
@@ -130,8 +132,9 @@ export function inParts(ratio: number): { food: number; partner: number } {
   let best = { food: 1, partner: 1 }
   let miss = Number.POSITIVE_INFINITY
   for (let food = 1; food <= 12; food++) {
-    for (const partner of [1, 2, 3, 4, 6, 8, 10, 12]) {
+    for (const partner of [1, 2, 3, 4, 5, 6, 8, 10, 12]) {
       if (food > 4 && partner > 1) continue
+      if ([2, 3, 4].some(common => food % common === 0 && partner % common === 0)) continue
       const here = Math.abs(Math.log(partner / food / ratio)) + 0.01 * (food + partner)
       if (here < miss) {
         miss = here

@@ -103,7 +103,7 @@ describe('complements', () => {
     expect(found.length).toBeGreaterThan(3)
     for (const { food: partner, ratio, diaas, example } of found) {
       const least = partner.portionG.least / mended.portionG.most
-      const most = partner.portionG.most / mended.portionG.least
+      const most = partner.portionG.most / mended.portionG.usual
       for (let i = 0; i <= 300; i++) {
         const r = least * (most / least) ** (i / 300)
         const here = diaasOf(
@@ -117,6 +117,7 @@ describe('complements', () => {
       }
       expect(example.partnerG / example.foodG).toBeCloseTo(ratio, 9)
       expect(example.foodG).toBeLessThanOrEqual(mended.portionG.most + 1e-9)
+      expect(example.foodG).toBeGreaterThanOrEqual(mended.portionG.usual - 1e-9)
       expect(example.partnerG).toBeLessThanOrEqual(partner.portionG.most + 1e-9)
       expect(partner.kin).not.toBe(mended.kin)
       expect(partner.origin).toBe('plant')
