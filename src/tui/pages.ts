@@ -11,6 +11,7 @@ import { INTAKE_RANGES } from '../nutrition/targets.ts'
 import { targetOf } from './problem-of.ts'
 import type { Knowledge, Page, State } from './state.ts'
 import { drawStaves, stavesAsText } from './staves/draw-staves.ts'
+import { noBodyMassTarget } from './stepping-back.ts'
 import { diaasText, grams } from './text/figures.ts'
 import { inColumns, wrapLines } from './text/lines.ts'
 
@@ -103,13 +104,20 @@ export function foodPage(food: Food, state: State, { table, colour }: Knowledge)
 /** The usual ranges of protein intake, with their sources. */
 export function rangesPage(state: State): Page {
   const width = Math.min(state.columns - 4, 90)
-  const lines = INTAKE_RANGES.flatMap(({ label, low, high, unit, source }) => [
+  const stays = noBodyMassTarget(state.settings)
+  const ranges = INTAKE_RANGES.filter(({ id }) => stays === null || id === 'adult-safe-level')
+  const lines = ranges.flatMap(({ label, low, high, unit, source }) => [
     ...wrapLines(`${label}: ${low === high ? low : `${low} to ${high}`} ${unit}`, width),
     ...wrapLines(`   ${source}`, width, 3),
     '',
   ])
-  const now = `The target now: ${Math.round(targetOf(state.settings))} g a serving.`
-  return page('Usual ranges, for healthy adults', [...lines, now, '', ...wrapLines(STANDING_NOTE, width)])
+  const now = stays ?? `The target now: ${Math.round(targetOf(state.settings))} g a serving.`
+  return page('Usual ranges, for healthy adults', [
+    ...lines,
+    ...wrapLines(now, width),
+    '',
+    ...wrapLines(STANDING_NOTE, width),
+  ])
 }
 
 /** The card of the plate, or why none can be made. `eatAt` is HH:MM, or null. */

@@ -1,16 +1,17 @@
 import { scoreBasis } from '../foods/score.ts'
-import { planningRefusal, stepBack } from '../kitchen/conditions.ts'
+import { planningRefusal } from '../kitchen/conditions.ts'
 import { mealTargetG } from '../nutrition/targets.ts'
 import { liftContext, liftOptions } from '../pairing/lift.ts'
 import type { LiftOption, PairingProblem, ShelfFood } from '../pairing/problem.ts'
 import type { Settings } from '../shelf/settings.ts'
 import type { Knowledge, State } from './state.ts'
+import { noBodyMassTarget } from './stepping-back.ts'
 
 /** Protein of a serving, g: plain grams win over body mass. */
 export function targetOf(settings: Settings): number {
   const { targetG, bodyMassKg, gPerKgPerDay, mealsPerDay, conditions } = settings
   if (targetG !== null) return targetG
-  if (bodyMassKg === null || !stepBack(conditions).bodyMassTargets) return 35
+  if (bodyMassKg === null || noBodyMassTarget({ conditions }) !== null) return 35
   return mealTargetG({ bodyMassKg, gPerKgPerDay, mealsPerDay })
 }
 

@@ -1,4 +1,4 @@
-import { readFileSync } from 'node:fs'
+import { readdirSync, readFileSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { afterEach, describe, expect, it } from 'vitest'
 import { KEYS, Screen } from './screen.ts'
@@ -230,6 +230,23 @@ describe('in a real terminal', () => {
     await screen.shows('Allergens:')
     await screen.shows(/lifts it|Nothing would lift/)
     await screen.fits(140)
+  })
+
+  it('sets a damaged shelf aside by its name, says so, and goes on', async () => {
+    const first = start()
+    await first.shows('the sample shelf')
+    first.type('#')
+    await first.shows('your shelf · 26 foods')
+    first.type(KEYS.ctrlC)
+    await first.ends()
+    const folder = join(first.home, 'kept')
+    writeFileSync(join(folder, 'shelf.json'), '{"version":1,"shelf":{"items":[{"food"')
+    const second = start({ home: first.home, columns: 100 })
+    await second.shows(/damaged|set aside/)
+    await second.shows('26 foods')
+    expect(readdirSync(folder).some(name => name.includes('damaged'))).toBe(true)
+    second.type('!')
+    await second.shows('to be used up')
   })
 
   it('uses no colour under NO_COLOR, and the letters still tell foods apart', async () => {

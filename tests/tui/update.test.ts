@@ -272,6 +272,40 @@ describe('bench', () => {
     expect(plain(view(state, knowledge))).toMatch(/phenylketonuria/i)
   })
 
+  it('steps back from targets by body mass where the settings tell of a condition, with the note', () => {
+    const pregnant = {
+      ...bench,
+      settings: { ...bench.settings, bodyMassKg: 70, targetG: null, conditions: ['pregnancy'] },
+    }
+    for (const key of ['b', 'i', 'm']) {
+      const { state } = typed(pregnant as typeof bench, key)
+      expect(state.prompt).toBeNull()
+      expect(state.message).toMatch(/midwife|doctor/)
+    }
+    const screen = plain(view(pregnant as typeof bench, knowledge))
+    expect(screen).toContain('target 35 g')
+    expect(screen.replace(/\s+/g, ' ')).toMatch(/Ask your midwife, doctor or dietitian/)
+    expect(plain(typed(pregnant as typeof bench, 'u').state.page!.lines)).not.toContain('people who train')
+  })
+
+  it('says where a target by body mass comes from', () => {
+    const { state } = typed(bench, 'b', '70', 'enter')
+    expect(plain(view(state, knowledge))).toContain('70 kg x 1.6 g/kg/day, 3 meals')
+    expect(plain(view(state, knowledge))).toContain('target 37 g')
+  })
+
+  it('hides numbers from whom they may weigh on, and keeps the grams that cooking needs', () => {
+    const settings = { ...bench.settings, conditions: ['eating-disorder-history' as const] }
+    const plate = typed({ ...bench, settings }, 'enter').state
+    for (const state of [{ ...bench, settings, why: true }, plate, opened(GALLEY, { settings })]) {
+      for (const columns of [80, 140]) {
+        const screen = plain(view({ ...state, columns, rows: 40 }, knowledge))
+        expect(screen).not.toMatch(/kcal|DIAAS|g protein|wanted|target \d|His +Ile/)
+        expect(screen).toMatch(/\d+ g/)
+      }
+    }
+  })
+
   it('takes a pairing to the plate, and compares two', () => {
     const plate = typed(bench, 'enter').state
     expect(plate.screen).toBe('plate')
@@ -329,6 +363,14 @@ describe('plate', () => {
     expect(state.plate).toEqual([])
     expect(plain(view(state, knowledge))).toMatch(/Served today:\n +1 x .* g /)
     expect(typed(state, 'z').state.plate).toEqual(plate.plate)
+  })
+
+  it('says before serving what the shelf has too little of', () => {
+    const much = { ...plate, settings: { ...plate.settings, servings: 50 } }
+    expect(plain(view(typed(much, 's').state, knowledge))).toMatch(/The shelf has only \d+ g of /)
+    expect(plain(view(typed(plate, 's').state, knowledge))).not.toContain('The shelf has')
+    const bought = typed(plate, 'a', '100 g tempeh', 'enter', 's').state
+    expect(plain(view(bought, knowledge))).toContain('The shelf has no Tempeh')
   })
 
   it('undoes and does again from every screen', () => {

@@ -54,6 +54,16 @@ describe('every screen, at every size', () => {
     expect(words).toContain('shortstave needs 60 by 16')
   })
 
+  it('never cuts what the store has to say: the name of a file may stand at its end', () => {
+    const message = `The shelf could not be read; it was set aside as ${'/home/cook/.config/shortstave/'.repeat(4)}shelf.damaged.json`
+    for (const [columns, rows] of SIZES) {
+      const words = plain(view({ ...opened(), columns, rows, message }, knowledge)).replace(/\s+/g, ' ')
+      expect(words.replaceAll(' ', '')).toContain('shelf.damaged.json')
+      const lines = view({ ...opened(), columns, rows, message }, knowledge)
+      for (const line of lines) expect(widthOf(line)).toBeLessThanOrEqual(columns)
+    }
+  })
+
   it('is drawn by ink as it stands', () => {
     const { lastFrame, unmount } = render(<Frame lines={view(opened(), knowledge)} />)
     expect(plain([lastFrame()!])).toContain('Lentils, red, dry')

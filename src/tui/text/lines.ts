@@ -5,7 +5,11 @@ export function wrapLines(text: string, width: number, indent = 0): string[] {
   const start = /^ */.exec(text)![0]
   const lines: string[] = []
   let line = start
-  for (const word of text.trimStart().split(' ')) {
+  const room = Math.max(1, width - Math.max(indent, start.length))
+  for (const word of text
+    .trimStart()
+    .split(' ')
+    .flatMap(whole => broken(whole, room))) {
     const candidate = line.trim() === '' ? line + word : `${line} ${word}`
     if (line.trim() !== '' && widthOf(candidate) > width) {
       lines.push(line)
@@ -16,6 +20,21 @@ export function wrapLines(text: string, width: number, indent = 0): string[] {
   }
   lines.push(line)
   return lines
+}
+
+/** A word that is longer than a line (a path) in pieces that are not. */
+function broken(word: string, room: number): string[] {
+  if (widthOf(word) <= room || word.includes('\u001b')) return [word]
+  const pieces: string[] = []
+  let piece = ''
+  for (const letter of word) {
+    if (piece !== '' && widthOf(piece + letter) > room) {
+      pieces.push(piece)
+      piece = ''
+    }
+    piece += letter
+  }
+  return [...pieces, piece]
 }
 
 /** Pads on the right to `width` columns, counting wide characters as the terminal does. */

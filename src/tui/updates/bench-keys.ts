@@ -3,6 +3,7 @@ import type { Key } from '../keys.ts'
 import { rangesPage } from '../pages.ts'
 import { targetOf } from '../problem-of.ts'
 import { type Knowledge, only, type Prompt, type State, type Updated } from '../state.ts'
+import { noBodyMassTarget } from '../stepping-back.ts'
 import { changeSettings } from './changes.ts'
 import { openPrompt } from './open-prompt.ts'
 import { withPlate } from './plate-keys.ts'
@@ -54,6 +55,8 @@ function lettered(state: State, letter: string, knowledge: Knowledge): Updated {
     const at = Number(letter) - 1
     return only(at < (state.answer?.pairings.length ?? 0) ? { ...state, chosen: at, message: '' } : state)
   }
+  const stays = noBodyMassTarget(settings)
+  if (/^[bim]$/.test(letter) && stays !== null) return only({ ...state, message: stays })
   switch (letter) {
     case 't':
       return ask(

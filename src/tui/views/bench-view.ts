@@ -1,12 +1,14 @@
 import { allergenName } from '../../kitchen/allergen-names.ts'
-import { STAVE_LABELS, STAVES, type Stave } from '../../nutrition/amino-acids.ts'
+import { STAVE_LABELS, STAVE_NAMES, STAVES, type Stave } from '../../nutrition/amino-acids.ts'
 import type { PlateScore } from '../../nutrition/plate-score.ts'
 import type { Pairing } from '../../pairing/problem.ts'
+import type { Settings } from '../../shelf/settings.ts'
 import { targetOf } from '../problem-of.ts'
 import type { State } from '../state.ts'
 import { drawStaves, stavesAsText, stavesSketch } from '../staves/draw-staves.ts'
 import { wholePercent } from '../staves/figures.ts'
 import { inFoodColour, letterOf } from '../staves/palette.ts'
+import { noBodyMassTarget, showsNumbers } from '../stepping-back.ts'
 import { STYLE } from '../style.ts'
 import { diaasText, grams, kcal, shortDiaas, signed, wholeScore } from '../text/figures.ts'
 import { clip, padEnd, wrapLines } from '../text/lines.ts'
@@ -19,6 +21,7 @@ import {
   isWide,
   type KeyName,
   keyLines,
+  LEAVE_KEY,
   PROMPT_KEYS,
   topLine,
 } from './frame.ts'
@@ -44,29 +47,35 @@ const KEYS: readonly KeyName[] = [
   ['u', 'usual ranges'],
   ['p', 'pattern'],
   ['Tab', 'plate'],
+  LEAVE_KEY,
+]
+
+const COMPARE_KEYS: readonly KeyName[] = [
+  ['↑↓', 'choose the other'],
+  ['Enter', 'that one to the plate'],
+  ['Esc', 'back to the list'],
 ]
 
 /** Where a plate is worked out: the target and the limits, and the pairings that follow from them. */
 export function benchView(state: State, colour: boolean): string[] {
   const { settings, columns } = state
   const servings = `${settings.servings} ${settings.servings === 1 ? 'serving' : 'servings'}`
-  const target = `target ${Math.round(targetOf(settings))} g`
+  const target = showsNumbers(settings) ? `target ${Math.round(targetOf(settings))} g · ` : ''
   const top = [
     topLine(
       state,
-      columns < 76
-        ? `${target} · ${servings}`
-        : `${target} · ${servings} · up to ${settings.foodsAtMost} foods`,
+      columns < 76 ? `${target}${servings}` : `${target}${servings} · up to ${settings.foodsAtMost} foods`,
     ),
     STYLE.dim(clip(` ${limitsText(state)}`, columns - 1)),
     '',
   ]
   const foot = [
     ...footLines(state, standingNote(state)),
-    ...keyLines(state, state.prompt === null ? KEYS : PROMPT_KEYS),
+    ...keyLines(state, state.prompt !== null ? PROMPT_KEYS : state.compared === null ? KEYS : COMPARE_KEYS),
   ]
   const chosen = state.answer?.pairings[state.chosen]
-  if (!isWide(state) || state.spoken || chosen === undefined || state.compared !== null)
+  const isPlain = state.spoken || !showsNumbers(settings)
+  if (!isWide(state) || isPlain || chosen === undefined || state.compared !== null)
     return fitted(state, top, bodyOf(state, columns, colour, bodyRows(state, top, foot)), foot)
   const left = bodyOf({ ...state, why: false }, columns - PANEL, colour, bodyRows(state, top, foot))
   const panel = panelOf(chosen, colour)
@@ -89,12 +98,19 @@ function limitsText(state: State): string {
   const parts = [
     isWaiting(state) ? `${SPINNER[state.spin % SPINNER.length]} working it out` : '',
     settings.pattern === 'fao-2013-over-3y' ? 'pattern FAO 2013, over 3 years' : 'pattern WHO 2007, adult',
+    fromBodyMass(settings),
     settings.without.length === 0 ? '' : `without ${settings.without.map(allergenName).join(', ')}`,
     settings.eggs ? 'eggs' : '',
     settings.dairy ? 'dairy' : '',
     settings.energyAtMostKcal === null ? '' : `at most ${settings.energyAtMostKcal} kcal`,
   ]
   return parts.filter(part => part !== '').join(' · ')
+}
+
+/** Where the target comes from, unless it was given in plain grams. */
+function fromBodyMass({ targetG, bodyMassKg, gPerKgPerDay, mealsPerDay, conditions }: Settings): string {
+  if (targetG !== null || bodyMassKg === null || noBodyMassTarget({ conditions }) !== null) return ''
+  return `${bodyMassKg} kg x ${gPerKgPerDay} g/kg/day, ${mealsPerDay} meals`
 }
 
 function bodyOf(state: State, columns: number, colour: boolean, room: number): string[] {
@@ -107,7 +123,7 @@ function bodyOf(state: State, columns: number, colour: boolean, room: number): s
   const compared = state.compared === null ? undefined : answer.pairings[state.compared]
   const chosen = answer.pairings[state.chosen]
   if (compared !== undefined && chosen !== undefined && compared !== chosen) {
-    lines.push(...sideBySide(compared, chosen, columns, room - lines.length))
+    lines.push(...sideBySide(compared, chosen, state, columns, room - lines.length))
     return lines
   }
   const blocks = answer.pairings.map((pairing, i) => pairingLines(pairing, i, state, columns, colour))
@@ -139,6 +155,7 @@ function pairingLines(pairing: Pairing, i: number, state: State, columns: number
     return `${letter} ${food.name} ${STYLE.bold(grams(g))}`
   })
   const { score } = pairing
+  const shown = showsNumbers(state.settings)
   const lines = joinFitting(foods, columns - 7).map((line, j) =>
     j === 0 ? ` ${under ? '▸' : ' '} ${STYLE.bold(String(i + 1))}  ${line}` : `      ${line}`,
   )
@@ -152,12 +169,19 @@ function pairingLines(pairing: Pairing, i: number, state: State, columns: number
   ].join(' · ')
   const sketch = score.staves === null || state.spoken ? '' : `  ${stavesSketch(score.staves)}`
   const fits = widthOf(facts) + widthOf(sketch) + 6 < columns
-  lines.push(...wrapLines(`      ${facts}${fits ? sketch : ''}`, columns - 1, 6))
-  if (under && state.spoken && score.staves !== null)
+  const told = shown ? `${facts}${fits ? sketch : ''}` : inWords(score)
+  lines.push(...wrapLines(`      ${told}`, columns - 1, 6))
+  if (under && shown && state.spoken && score.staves !== null)
     lines.push(...wrapLines(`      ${stavesAsText(score.staves)}`, columns - 1, 6))
-  if (under && state.why) lines.push(...reasonLines(pairing, columns - 1, 6))
+  if (under && shown && state.why) lines.push(...reasonLines(pairing, columns - 1, 6))
   lines.push('')
   return lines
+}
+
+/** A score without its numbers. */
+function inWords({ class: quality, limiting }: PlateScore): string {
+  const words = quality === 'no claim' ? 'no quality claim' : `${quality} quality`
+  return limiting === null ? words : `${words} · shortest ${STAVE_NAMES[limiting]}`
 }
 
 /** What each food brings, what is shortest now, and what would lift it. */
@@ -186,10 +210,11 @@ function joinFitting(pieces: readonly string[], width: number): string[] {
 }
 
 /** Two pairings side by side: foods, figures, and each stave of both. */
-function sideBySide(a: Pairing, b: Pairing, columns: number, room: number): string[] {
+function sideBySide(a: Pairing, b: Pairing, state: State, columns: number, room: number): string[] {
   const half = Math.floor((Math.min(columns, 120) - 5) / 2)
   const column = (pairing: Pairing): string[] => {
     const { score } = pairing
+    if (!showsNumbers(state.settings)) return wrapLines(inWords(score), half)
     return [
       clip(diaasText(score), half),
       clip(`${score.proteinG.toFixed(1)} g protein, ${score.adjustedProteinG.toFixed(1)} g adjusted`, half),

@@ -13,6 +13,8 @@ const TWO_KEY_LINES_FROM = 22
 
 export type KeyName = readonly [key: string, what: string]
 /** What works while a line is being typed. */
+/** How the program is left, told on every screen where there is room. */
+export const LEAVE_KEY: KeyName = ['Ctrl+C', 'leave']
 export const PROMPT_KEYS: readonly KeyName[] = [
   ['Enter', 'take it'],
   ['Esc', 'leave it'],
@@ -91,11 +93,18 @@ function typedText({ text, caret, fresh }: Typed, room: number): string {
   return `${before}${STYLE.reverse(letters[caret] ?? ' ')}${after}`
 }
 
+/** What was said last is never cut short of this: the name of a file may stand at its end. */
+const MESSAGE_LINES = 4
+
 /** Above the keys: the open line, or what was said last, or else a line that always stands there. */
 export function footLines(state: State, standing: string): string[] {
   if (state.prompt !== null) return promptLines(state)
-  if (state.message !== '') return [` ${clip(state.message, state.columns - 2)}`]
-  return [standing === '' ? '' : STYLE.dim(` ${clip(standing, state.columns - 2)}`)]
+  if (state.message !== '')
+    return wrapLines(` ${state.message}`, state.columns - 1, 1).slice(0, MESSAGE_LINES)
+  if (standing === '') return ['']
+  return wrapLines(` ${standing}`, state.columns - 1, 1)
+    .slice(0, MESSAGE_LINES)
+    .map(STYLE.dim)
 }
 
 /** A rule across the screen with a title in it. */

@@ -9,6 +9,7 @@ import type { Knowledge, State } from '../state.ts'
 import { drawStaves, stavesAsText, stavesSketch } from '../staves/draw-staves.ts'
 import { wholePercent } from '../staves/figures.ts'
 import { foodSign } from '../staves/palette.ts'
+import { showsNumbers } from '../stepping-back.ts'
 import { STYLE } from '../style.ts'
 import { diaasText, grams, kcal, shortDiaas, signed, wholeScore } from '../text/figures.ts'
 import { clip, padEnd, padStart, wrapLines } from '../text/lines.ts'
@@ -20,6 +21,7 @@ import {
   isWide,
   type KeyName,
   keyLines,
+  LEAVE_KEY,
   PROMPT_KEYS,
   topLine,
 } from './frame.ts'
@@ -40,7 +42,9 @@ export function plateView(state: State, knowledge: Knowledge): string[] {
   const top = [
     topLine(
       state,
-      `${Math.round(targetOf(settings))} g wanted, ${score.proteinG.toFixed(0)} g here${servings}`,
+      showsNumbers(settings)
+        ? `${Math.round(targetOf(settings))} g wanted, ${score.proteinG.toFixed(0)} g here${servings}`
+        : servings.replace(' · ', ''),
     ),
   ]
   const foot = [...footOf(state), ...keyLines(state, keysOf(state))]
@@ -107,7 +111,7 @@ function chartLines(
   colour: boolean,
 ): string[] {
   const { staves, pattern } = score
-  if (staves === null) return []
+  if (staves === null || !showsNumbers(state.settings)) return []
   if (state.spoken) return wrapLines(` ${stavesAsText(staves)}`, state.columns - 1, 1)
   if (height < STAVES_ROWS.least) {
     const figures = STAVES.map(
@@ -125,6 +129,12 @@ function chartLines(
 
 function factLines(score: PlateScore<Food>, state: State, columns: number): string[] {
   const short = score.limiting === null ? '' : STAVE_NAMES[score.limiting]
+  if (!showsNumbers(state.settings))
+    return wrapLines(
+      ` ${score.class === 'no claim' ? 'no quality claim' : `${score.class} quality`} · shortest ${short}`,
+      columns - 1,
+      1,
+    )
   const first = [
     STYLE.bold(diaasText(score)),
     ...(score.limiting === null
@@ -148,12 +158,20 @@ function factLines(score: PlateScore<Food>, state: State, columns: number): stri
 
 function foodLines(state: State, score: PlateScore<Food>, columns: number, colour: boolean): string[] {
   const wide = columns >= 76
+  const shown = showsNumbers(state.settings)
   return score.items.map(({ food, grams: g, proteinG, diaasAlone }, i) => {
     const under = i === state.plateCursor
     const right = [
       padStart(grams(g), 7),
-      padStart(wide ? `${proteinG.toFixed(1)} g protein` : `${proteinG.toFixed(0)} g prot.`, wide ? 15 : 10),
-      ...(wide ? [padEnd(diaasAlone === null ? '' : `alone ${wholeScore(diaasAlone)}`, 9)] : []),
+      ...(shown
+        ? [
+            padStart(
+              wide ? `${proteinG.toFixed(1)} g protein` : `${proteinG.toFixed(0)} g prot.`,
+              wide ? 15 : 10,
+            ),
+          ]
+        : []),
+      ...(wide && shown ? [padEnd(diaasAlone === null ? '' : `alone ${wholeScore(diaasAlone)}`, 9)] : []),
     ].join('  ')
     const room = Math.max(10, Math.min(columns - 12 - right.length, 60))
     const name = clip(food.name, room)
@@ -172,7 +190,7 @@ function liftLines(state: State, knowledge: Knowledge, columns: number): string[
     const amount = option.deltaG < 0 ? `${size} less` : there ? `${size} more` : `add ${size}`
     const where = option.onShelf ? '' : ' (to buy)'
     const label = i === 0 ? 'lifts it ' : '         '
-    const start = ` ${STYLE.dim(label)}${STYLE.bold(String(i + 1))}  to ${wholeScore(option.diaas).padStart(3)}  `
+    const start = ` ${STYLE.dim(label)}${STYLE.bold(String(i + 1))}  ${showsNumbers(state.settings) ? `to ${wholeScore(option.diaas).padStart(3)}  ` : ''}`
     return start + clip(`${amount} ${option.food.name}${where}`, Math.max(10, columns - 22))
   })
 }
@@ -198,11 +216,24 @@ function footOf(state: State): string[] {
   if (!state.asksServe) return footLines(state, standingNote(state))
   const { servings } = state.settings
   const what = servings === 1 ? 'this plate' : `${servings} of these plates`
+  const short = shortOf(state)
+  const question = ` Serve: take ${what} off the shelf? Enter or y: yes; any other key: no`
   return [
-    STYLE.bold(
-      clip(` Serve: take ${what} off the shelf? Enter or y: yes; any other key: no`, state.columns - 1),
-    ),
+    ...(short === '' ? [] : wrapLines(` The shelf has ${short}.`, state.columns - 1, 1)),
+    STYLE.bold(clip(question, state.columns - 1)),
   ]
+}
+
+/** Of which foods serving takes more than the shelf has. */
+function shortOf({ plate, shelf, settings }: State): string {
+  const onHand = new Map(shelf.items.map(({ food, grams: g }) => [food, g]))
+  return plate
+    .flatMap(({ food, grams: g }) => {
+      const here = onHand.get(food.id)
+      if (here === undefined) return [`no ${food.name}`]
+      return here < g * settings.servings ? [`only ${grams(here)} of ${food.name}`] : []
+    })
+    .join(', ')
 }
 
 function keysOf(state: State): readonly KeyName[] {
@@ -231,6 +262,7 @@ function keysOf(state: State): readonly KeyName[] {
     ['f', 'look'],
     ['n', 'servings'],
     ['Tab', 'shelf'],
+    LEAVE_KEY,
   ]
 }
 

@@ -6,6 +6,7 @@ import { type ShelfRow, shelfRows } from '../rows.ts'
 import type { Knowledge, State } from '../state.ts'
 import { stavesSketch } from '../staves/draw-staves.ts'
 import { wholePercent } from '../staves/figures.ts'
+import { showsNumbers } from '../stepping-back.ts'
 import { STYLE } from '../style.ts'
 import { grams } from '../text/figures.ts'
 import { clip, padEnd, padStart } from '../text/lines.ts'
@@ -19,6 +20,7 @@ import {
   isWide,
   type KeyName,
   keyLines,
+  LEAVE_KEY,
   PROMPT_KEYS,
   rule,
   topLine,
@@ -39,7 +41,8 @@ export function shelfView(state: State, knowledge: Knowledge): string[] {
   ]
   const foot = [...footLines(state, standing(state)), ...keyLines(state, keysOf(state, rows[cursor]))]
   const room = bodyRows(state, top, foot)
-  const panelOf = isWide(state) && !state.spoken ? (rows[cursor]?.food ?? null) : null
+  const panelOf =
+    isWide(state) && !state.spoken && showsNumbers(state.settings) ? (rows[cursor]?.food ?? null) : null
   const columns = panelOf === null ? state.columns : state.columns - PANEL
   const list = listLines(state, knowledge, rows, cursor, room, columns)
   const body =
@@ -104,11 +107,11 @@ function standing({ sample, columns }: State): string {
 
 function keysOf(state: State, row: ShelfRow | undefined): readonly KeyName[] {
   if (state.prompt !== null) return PROMPT_KEYS
-  const sample: KeyName[] = state.sample && state.find === '' ? [['0', 'empty shelf']] : []
+  const sample: KeyName[] = state.sample && state.find === '' ? [['0', 'empty it']] : []
   const clear: KeyName[] = state.find === '' ? [] : [['Esc', 'clear']]
-  const rest: KeyName[] = [...clear, ['<', 'undo'], ['/', 'order'], ['+', 'food from a packet']]
+  const rest: KeyName[] = [...clear, ['<', 'undo'], ['/', 'order'], ['+', 'packet'], LEAVE_KEY]
   if (row === undefined) return [['Tab', 'bench'], ...sample, ...rest]
-  if (row.kind === 'table') return [['Enter', 'add it'], ['=', 'look'], ...clear, ['Tab', 'bench']]
+  if (row.kind === 'table') return [['Enter', 'add it'], ['=', 'look'], ...clear, ['Tab', 'bench'], LEAVE_KEY]
   return [
     ['Tab', 'bench'],
     ['Enter', 'amount'],
@@ -157,7 +160,7 @@ function rowLine(
     padEnd(mark, 9),
     padStart(amount, 7),
     ...(dated ? [padEnd(days, 5)] : []),
-    ...(columns < 72 ? [] : [padStart(protein, 14)]),
+    ...(columns < 72 || !showsNumbers(state.settings) ? [] : [padStart(protein, 14)]),
     sketch,
   ].join(' ')
   const name = food?.name ?? (row.kind === 'here' ? `${row.item.food} (not in the table)` : '')
