@@ -107,7 +107,7 @@ function standing({ sample, columns }: State): string {
 
 function keysOf(state: State, row: ShelfRow | undefined): readonly KeyName[] {
   if (state.prompt !== null) return PROMPT_KEYS
-  const sample: KeyName[] = state.sample && state.find === '' ? [['0', 'empty it']] : []
+  const sample: KeyName[] = state.sample && state.find === '' ? [['0', 'start empty']] : []
   const clear: KeyName[] = state.find === '' ? [] : [['Esc', 'clear']]
   const rest: KeyName[] = [...clear, ['<', 'undo'], ['/', 'order'], ['+', 'packet'], LEAVE_KEY]
   if (row === undefined) return [['Tab', 'bench'], ...sample, ...rest]
