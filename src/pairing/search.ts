@@ -111,6 +111,7 @@ export class Search {
         if (reach < this.wanted()) break
         if (this.weigh(set) === null) lacking.push(set)
       }
+      if (size === free) break
       // Pairs are grown from every single food, reachable or not: two that fail alone may do together.
       seeds =
         size === 1
@@ -248,6 +249,7 @@ export class Search {
     )
   }
 
+  /** The prices that prove the grams of a proposal the best. */
   private pricesOf({ set }: Proposal): Prices | null {
     return weighed(set, this.space.window, 0).prices
   }
