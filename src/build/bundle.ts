@@ -1,5 +1,5 @@
 import { chmod, copyFile, mkdir, readFile, rm, writeFile } from 'node:fs/promises'
-import { build } from 'esbuild'
+import { type BuildOptions, build } from 'esbuild'
 
 /**
  * Bundles the program into dist/: shortstave.js, which every command starts from, pairing-thread.js, in which the
@@ -15,15 +15,10 @@ const { version } = JSON.parse(await readFile(at('package.json'), 'utf8')) as { 
 
 await rm(at('dist'), { recursive: true, force: true })
 await mkdir(at('dist'))
-await build({
-  entryPoints: {
-    shortstave: at('src/cli/main.ts'),
-    'pairing-thread': at('src/tui/pairings/thread.ts'),
-  },
+const options: BuildOptions = {
   outdir: at('dist'),
   chunkNames: 'part-[hash]',
   bundle: true,
-  splitting: true,
   minify: true,
   format: 'esm',
   platform: 'node',
@@ -87,7 +82,10 @@ await build({
     },
   ],
   logLevel: 'warning',
-})
+}
+await build({ ...options, entryPoints: { shortstave: at('src/cli/main.ts') }, splitting: true })
+// The thread is a program of its own: shared parts would cut the main one into more files to read at the start.
+await build({ ...options, entryPoints: { 'pairing-thread': at('src/tui/pairings/thread.ts') } })
 const program = at('dist/shortstave.js')
 await writeFile(program, `#!/usr/bin/env node\n${await readFile(program, 'utf8')}`)
 await chmod(program, 0o755)
