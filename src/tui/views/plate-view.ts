@@ -63,7 +63,7 @@ function stackedBody(state: State, score: PlateScore<Food>, knowledge: Knowledge
   const { columns } = state
   const facts = factLines(score, state, columns)
   const list = foodLines(state, score, columns, knowledge.colour)
-  const lifts = liftLines(state, knowledge, columns)
+  const lifts = liftLines(state, score, knowledge, columns)
   const care = careOf(score, state, columns)
   const held = facts.length + list.length + lifts.length + care.must.length
   const spare = room - held - 2
@@ -94,7 +94,7 @@ function wideBody(state: State, score: PlateScore<Food>, knowledge: Knowledge, r
     '',
     ...foodLines(state, score, width, knowledge.colour),
     '',
-    ...liftLines(state, knowledge, width),
+    ...liftLines(state, score, knowledge, width),
     '',
     ...must,
     '',
@@ -179,11 +179,16 @@ function foodLines(state: State, score: PlateScore<Food>, columns: number, colou
   })
 }
 
-/** Always as many lines as there may be lifts, so that nothing jumps while an amount is changed. */
-function liftLines(state: State, knowledge: Knowledge, columns: number): string[] {
+/** What would lift the plate, by the keys that try it; or that nothing need or would. */
+function liftLines(state: State, score: PlateScore<Food>, knowledge: Knowledge, columns: number): string[] {
   const options = liftsOf(state, knowledge)
-  if (options.length === 0)
-    return [STYLE.dim(clip(' Nothing would lift it much: no small change gives a point more.', columns - 1))]
+  if (options.length === 0) {
+    const enough = score.diaas !== null && score.diaas >= 100
+    const words = enough
+      ? 'No stave is short: nothing need be lifted.'
+      : 'No small change would lift it by a point.'
+    return [STYLE.dim(clip(` ${words}`, columns - 1))]
+  }
   return options.map((option, i) => {
     const there = state.plate.some(({ food }) => food.id === option.food.id)
     const size = grams(Math.abs(option.deltaG))
