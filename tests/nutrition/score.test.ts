@@ -36,7 +36,7 @@ describe('the score of any plate', () => {
     )
   })
 
-  it('is not changed by splitting or reordering portions, and nor is its band, to the bit', () => {
+  it('is not changed by splitting or reordering portions, and nor is its band', () => {
     fc.assert(
       fc.property(plate, fc.double({ min: 0.05, max: 0.95, noNaN: true }), (portions, share) => {
         const split = portions.flatMap(({ food, grams }) => [
@@ -92,6 +92,76 @@ describe('the score of any plate', () => {
           }
         },
       ),
+    )
+  })
+
+  it('gains by mixing, never loses: DIAAS is at least the protein-weighted mean of the foods` own', () => {
+    // The least of sums is not below the sum of the least.
+    fc.assert(
+      fc.property(plate, portions => {
+        expect(scorePlate(portions, basis).gain!).toBeGreaterThan(-1e-9)
+      }),
+    )
+  })
+
+  it('has neither gain nor lift for one food, whatever its grams', () => {
+    fc.assert(
+      fc.property(portion, one => {
+        const score = scorePlate([one, one], basis)
+        near(score.gain!, 0)
+        near(score.lift!, 0)
+      }),
+    )
+  })
+
+  it('takes no notice of what brings no protein, or is not on the plate', () => {
+    const oil = table.foods.find(({ per100g }) => per100g.crudeProteinG === 0)!
+    fc.assert(
+      fc.property(plate, portion, (portions, absent) => {
+        const plain = scorePlate(portions, basis)
+        const dressed = scorePlate(
+          [{ food: oil, grams: 15 }, ...portions, { food: absent.food, grams: 0 }],
+          basis,
+        )
+        for (const key of ['diaas', 'pdcaas', 'gain', 'lift', 'adjustedProteinG'] as const)
+          near(plain[key]!, dressed[key]!)
+        expect(dressed.limiting).toBe(plain.limiting)
+        expect(dressed.band).toEqual(plain.band)
+      }),
+    )
+  })
+
+  it('has a PDCAAS that never falls when a food is digested better or holds more of an amino acid', () => {
+    fc.assert(
+      fc.property(
+        plate,
+        fc.constantFrom(...AMINO_ACIDS),
+        fc.double({ min: 1, max: 1.5, noNaN: true }),
+        ([first, ...rest], acid, more) => {
+          const { food, grams } = first!
+          const before = pdcaasOf([first!, ...rest], pdcaasPattern)!
+          const { digestibility, aminoMgPerG } = food
+          const digested = { ...digestibility, proteinFaecal: digestibility.proteinFaecal * more }
+          const richer = { ...aminoMgPerG, [acid]: aminoMgPerG[acid] * more }
+          for (const better of [
+            { ...food, digestibility: digested },
+            { ...food, aminoMgPerG: richer },
+          ])
+            expect(pdcaasOf([{ food: better, grams }, ...rest], pdcaasPattern)!).toBeGreaterThanOrEqual(
+              before - 1e-9,
+            )
+        },
+      ),
+    )
+  })
+
+  it('has the same band each time, whatever was scored in between', () => {
+    fc.assert(
+      fc.property(plate, plate, (portions, others) => {
+        const first = bandOf(portions, pattern, coefficients)
+        bandOf(others, pattern, coefficients)
+        expect(bandOf(portions, pattern, coefficients)).toEqual(first)
+      }),
     )
   })
 
