@@ -244,6 +244,56 @@ describe('sums that can be done by hand', () => {
     expect(lysine).toBeCloseTo((100 * (30 * 60 + 30 * 30)) / 60 / 48, 9)
   })
 
+  it('adds up grams, energy, protein, leucine and fibre; fibre of foods where it is known', () => {
+    const first: ProteinSource = {
+      ...plain('first', 20, 80),
+      per100g: { proteinG: 18, crudeProteinG: 20, kcal: 150, fibreG: 6 },
+    }
+    const second = plain('second', 10, 60)
+    const score = scorePlate(
+      [
+        { food: first, grams: 150 },
+        { food: second, grams: 50 },
+      ],
+      basis,
+    )
+    near(score.grams, 200)
+    near(score.kcal, 1.5 * 150 + 0.5 * 100)
+    near(score.proteinG, 1.5 * 18 + 0.5 * 10)
+    near(score.crudeProteinG, 1.5 * 20 + 0.5 * 10)
+    // 80 and 60 mg leucine in each g of crude protein, digested or not.
+    near(score.leucineG, (30 * 80 + 5 * 60) / 1000)
+    near(score.fibreG, 9)
+  })
+
+  it('has a wider band for each doubt, at the staves that the doubt names', () => {
+    const width = (food: ProteinSource) => {
+      const band = bandOf([{ food, grams: 100 }], pattern, coefficients)!
+      return band.high - band.low
+    }
+    const byLysine = plain('doubted', 10, 1000)
+    byLysine.aminoMgPerG.lys = 20
+    const byThreonine = plain('doubted', 10, 1000)
+    byThreonine.aminoMgPerG.thr = 10
+    for (const doubt of ['non-protein-nitrogen', 'related-species', 'own-food', 'heat-damaged'] as const)
+      expect(width({ ...byLysine, doubts: [doubt] })).toBeGreaterThan(1.2 * width(byLysine))
+    // Dry heat takes lysine; threonine it leaves.
+    near(width({ ...byThreonine, doubts: ['heat-damaged'] }), width(byThreonine))
+  })
+
+  it('takes the spread of protein content into a mixture`s band, where it shifts the weights, and not into one food`s', () => {
+    const [low, high] = [plain('low', 10, 1000), plain('high', 10, 1000)]
+    low.aminoMgPerG.lys = 10
+    high.aminoMgPerG.lys = 90
+    const width = (protein: number, ...foods: ProteinSource[]) => {
+      const portions = foods.map(food => ({ food, grams: 100 }))
+      const band = bandOf(portions, pattern, { ...coefficients, protein })!
+      return band.high - band.low
+    }
+    expect(width(0.3, low, high)).toBeGreaterThan(1.15 * width(0, low, high))
+    near(width(0.3, low), width(0, low))
+  })
+
   it('has a narrower band where the figures are firmer', () => {
     const firm = plain('same', 10, 40)
     const soft: ProteinSource = { ...firm, profileTier: 'estimated', digestibilityTier: 'class default' }
