@@ -1,5 +1,7 @@
+import type { Food } from '../foods/food.ts'
 import { plainText } from '../foods/plain-text.ts'
 import { planningRefusal } from '../kitchen/conditions.ts'
+import { cookedFrom } from '../kitchen/yields.ts'
 import { STAVE_NAMES } from '../nutrition/amino-acids.ts'
 import { diaasOf } from '../nutrition/diaas.ts'
 import { type Complement, complementsOf, inParts } from '../pairing/complement.ts'
@@ -22,8 +24,8 @@ complement ID [--shelf FILE] [--without A] [...]
   shortstave complement lentils-red-boiled
   shortstave complement "white rice" --shelf galley.csv
 
-The partners that raise a food's DIAAS most, the best of each kind first, in the proportion by weight (both as their
-names say) that does it in portions a person eats. From the whole table, or from a shelf.
+The partners that raise a food's DIAAS most, the best of each kind first, in the proportion by cooked weight that does
+it in portions a person eats; the grams are as the names say, so a dry food's are dry. From the whole table, or a shelf.
   --shelf FILE     only from this shelf (- reads standard input; "mine" is the shelf you keep)
   --without A      leave out foods with an allergen (may be given again)
   --eggs, --dairy  allow them; otherwise plants alone
@@ -80,7 +82,7 @@ names say) that does it in portions a person eats. From the whole table, or from
         pattern: pattern.id,
         diaas_alone: own.diaas,
         limiting: own.limiting,
-        complements: found.map(complementJson),
+        complements: found.map(partner => complementJson(food, partner)),
         ...careJson(foods),
       })
       return { code: found.length === 0 ? NO_ANSWER : 0, out, err: '' }
@@ -98,19 +100,19 @@ names say) that does it in portions a person eats. From the whole table, or from
           : `Nothing from ${plainText(label)} raises it.`
       return { code: NO_ANSWER, out: `${lines.join('\n')}\n${reason}\n`, err: '' }
     }
-    lines.push(`From ${label}, by weight:`, '')
+    lines.push(`From ${plainText(label)}, by cooked weight:`, '')
     const rows = found.map(partner => [
       partner.food.name,
-      partsText(partner),
+      partsText(food, partner),
       `${grams(partner.example.foodG)} + ${grams(partner.example.partnerG)}`,
       `DIAAS ${wholeScore(partner.diaas)}`,
       signed(partner.mends),
-      `short of ${partner.limiting}`,
+      Math.round(partner.diaas) >= 100 ? 'nothing short' : `short of ${partner.limiting}`,
     ])
     lines.push(...inColumns(rows, [4]), '')
     lines.push(
       ...wrapLines(
-        `"3 : 1" is three parts of ${plainText(food.name)} to one part of the partner. The last columns: what the mixture scores, by how much that is above the food alone, and which stave is its shortest.`,
+        `"3 : 1" is three parts of ${plainText(food.name)} to one of the partner, weighed as eaten: a dry food once cooked. The grams are an example as the names say${dryAmong(found, food) ? ', so dry foods dry' : ''}. The last columns: what the mixture scores, by how much that is above the food alone, and which stave is its shortest.`,
         world.columns,
       ),
       ...careLines(foods, world.columns),
@@ -119,16 +121,26 @@ names say) that does it in portions a person eats. From the whole table, or from
   },
 }
 
-function partsText({ ratio }: Complement): string {
-  const parts = inParts(ratio)
+/** What 1 g of a food weighs on the plate: more than 1 g for one that takes up water when cooked. */
+const cookedG = (food: Food): number => cookedFrom(food, 1)?.grams ?? 1
+
+const cookedRatio = (food: Food, partner: Complement): number =>
+  (partner.ratio * cookedG(partner.food)) / cookedG(food)
+
+const dryAmong = (found: readonly Complement[], food: Food): boolean =>
+  [food, ...found.map(partner => partner.food)].some(of => cookedG(of) !== 1)
+
+function partsText(food: Food, partner: Complement): string {
+  const parts = inParts(cookedRatio(food, partner))
   return `${parts.food} : ${parts.partner}`
 }
 
-function complementJson(partner: Complement) {
+function complementJson(food: Food, partner: Complement) {
   return {
     food: partner.food.id,
     name: partner.food.name,
     grams_per_gram: partner.ratio,
+    cooked_grams_per_gram: cookedRatio(food, partner),
     example_food_g: partner.example.foodG,
     example_partner_g: partner.example.partnerG,
     diaas: partner.diaas,

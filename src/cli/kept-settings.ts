@@ -17,6 +17,5 @@ export async function settingsOf(world: World): Promise<Settings> {
 /** Keeps the day on which vitamin B12 was mentioned; where nothing can be kept it is simply said again. */
 export async function rememberB12(world: World, today: string): Promise<void> {
   const { SettingsStore } = await import('../shelf/settings-store.ts')
-  const store = new SettingsStore(homeOf(world.env))
-  store.write({ ...store.read().settings, lastB12Day: today })
+  await new SettingsStore(homeOf(world.env)).change({ lastB12Day: today })
 }

@@ -16,7 +16,7 @@ import { readArguments, readNumber } from './arguments.ts'
 import { NO_ANSWER, type Outcome, Refusal, type World } from './command.ts'
 import { openStore } from './kept.ts'
 import { readWithout } from './options.ts'
-import { ownFoodsIn } from './own-foods.ts'
+import { idOf, ownFoodsIn } from './own-foods.ts'
 
 const KINDS = {
   per: 'text',
@@ -67,7 +67,7 @@ export async function changeOwnFoods(
       world.table(),
       own.map(({ id }) => id),
     )
-    return keep(reading, food => [...own, food], assumed)
+    return keep(reading, (food, kept) => [...kept, food], assumed)
   }
   const known = own.find(({ id, name: called }) => id === name || called.toLowerCase() === name.toLowerCase())
   if (known === undefined) {
@@ -88,13 +88,13 @@ export async function changeOwnFoods(
     const reading = editOwnFood(known, changes, world.table())
     return keep(
       reading,
-      food => own.map(other => (other.id === food.id ? food : other)),
+      (food, kept) => kept.map(other => (idOf(other) === food.id ? food : other)),
       uses === null ? assumed : [...assumed, `note: ${uses}`],
     )
   }
   if (uses !== null && !options.yes)
     throw new Refusal(`${known.name}: ${uses}; add --yes to remove it all the same`)
-  const kept = await store.setOwnFoods(own.filter(({ id }) => id !== known.id))
+  const kept = await store.setOwnFoods(before => before.filter(other => idOf(other) !== known.id))
   return {
     code: kept.saved ? 0 : NO_ANSWER,
     out: '',
@@ -103,11 +103,11 @@ export async function changeOwnFoods(
 
   async function keep(
     reading: ReturnType<typeof ownFoodOf>,
-    withFood: (food: OwnFood) => OwnFood[],
+    withFood: (food: OwnFood, kept: readonly unknown[]) => unknown[],
     assumed: string[],
   ): Promise<Outcome> {
     if (!reading.ok) throw new Refusal(reading.problems.join('; '))
-    const kept = await store.setOwnFoods(withFood(reading.own))
+    const kept = await store.setOwnFoods(before => withFood(reading.own, before))
     const food: Food = ownFoodToFood(reading.own, world.table())
     const lines = [
       ...assumed,

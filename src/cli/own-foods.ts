@@ -17,5 +17,8 @@ export function ownFoodsIn(kept: readonly unknown[]): OwnFood[] {
   })
 }
 
+/** The id of a kept food, be it sound or not. */
+export const idOf = (kept: unknown): unknown => (kept as { id?: unknown } | null)?.id
+
 /** The table with them. */
 export const tableWith = (table: Table, own: readonly OwnFood[]): Table => withOwnFoods(table, own).table

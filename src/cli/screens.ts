@@ -1,5 +1,5 @@
 import { answer, type Command } from './command.ts'
-import { homeOf, openStore } from './kept.ts'
+import { anythingKept, homeOf, openStore } from './kept.ts'
 import { sampleShelf } from './shelf-source.ts'
 
 /** The terminal screens; without a terminal, what they would open with: the pairings of the shelf. */
@@ -13,6 +13,7 @@ export const screens: Command = {
     await runScreens({
       table: world.table(),
       sampleShelf: sampleShelf(world),
+      kept: anythingKept(world.env),
       colour: world.colour,
       spoken: world.env.INK_SCREEN_READER === 'true',
       now: world.now,

@@ -59,7 +59,9 @@ The tool then says what it cannot judge, and steps back where it should. It info
     }
     const next =
       name === 'reset' && values.length === 0 ? DEFAULT_SETTINGS : changed(kept.settings, name, values)
-    const problem = store.write(next)
+    const key = NAMES[name]?.key
+    // Only what is set, so that another process's change of another setting stays.
+    const { problem } = await store.change(key === undefined ? next : { [key]: next[key] })
     if (problem !== null) return { code: NO_ANSWER, out: '', err: `${err}${plainText(problem)}\n` }
     const now =
       name === 'reset'

@@ -6,7 +6,7 @@ import { foodByWords } from '../foods/search.ts'
 import type { ShelfFood } from '../pairing/problem.ts'
 import { readShelfFile } from '../shelf/import-export.ts'
 import type { Shelf } from '../shelf/shelf.ts'
-import { Refusal, type World } from './command.ts'
+import { NO_ANSWER, Refusal, type World } from './command.ts'
 import { anythingKept, openStore } from './kept.ts'
 
 /** The shelf a command works on, and how to call it in a sentence. */
@@ -32,12 +32,26 @@ export async function chosenShelf(option: string | undefined, world: World): Pro
 
 /** Reads a shelf file's text, or refuses it with the first line that is wrong and how many more there are. */
 export function shelfFromText(text: string, label: string, world: World): Shelf {
-  const { shelf, problems } = readShelfFile(text, words => {
-    const byId = world.table().foodById.get(words)
+  return readShelfText(text, label, world).shelf
+}
+
+/**
+ * The same, with what the cook should be told of how lines were understood. `alongside` are foods from packets that the
+ * file brings with it.
+ */
+export function readShelfText(
+  text: string,
+  label: string,
+  world: World,
+  alongside: readonly { id: string }[] = [],
+): { shelf: Shelf; told: string[] } {
+  const { shelf, problems, told } = readShelfFile(text, words => {
+    const byId = world.table().foodById.get(words) ?? alongside.find(({ id }) => id === words)
     return byId === undefined ? foodByWords(words, world.finder()) : { ok: true, food: byId }
   })
   const [first, ...more] = problems
-  if (first === undefined) return shelf
+  if (first === undefined)
+    return { shelf, told: told.map(({ line, problem }) => `${label}, line ${line}: ${problem}`) }
   const others = more.length === 0 ? '' : ` (and ${more.length} more ${more.length === 1 ? 'line' : 'lines'})`
   throw new Refusal(`${label}, line ${first.line}: ${first.problem}${others}`)
 }
@@ -46,10 +60,13 @@ export function sampleShelf(world: World): Shelf {
   return shelfFromText(readFileSync(dataFile('sample-shelf.csv'), 'utf8'), 'sample shelf', world)
 }
 
-/** What the cook keeps, or null while nothing has been put there. */
+/** What the cook keeps, or null while nothing has been put there; refused where it is there and cannot be read. */
 async function keptShelf(world: World): Promise<NamedShelf | null> {
   if (!anythingKept(world.env)) return null
-  const { document } = await (await openStore(world.env)).read()
+  const { document, problem, notices } = await (await openStore(world.env)).read()
+  if (problem !== null) throw new Refusal(problem, NO_ANSWER)
+  // A damaged file without a copy: the sample would pass for what was kept.
+  if (!document.begun && notices.length > 0) throw new Refusal(notices.join('; '), NO_ANSWER)
   return document.begun ? { shelf: document.shelf, label: 'your shelf' } : null
 }
 

@@ -1,7 +1,8 @@
 import type { Food } from '../foods/food.ts'
+import type { OwnFood } from '../foods/own-food.ts'
 import { plainText } from '../foods/plain-text.ts'
 import { readPortion } from '../foods/read-portion.ts'
-import type { ShelfChange } from '../shelf/changes.ts'
+import { additionsOf, type ShelfChange } from '../shelf/changes.ts'
 import { writeShelfCsv, writeShelfJson } from '../shelf/import-export.ts'
 import { isDay, MARKS } from '../shelf/marks.ts'
 import type { Shelf } from '../shelf/shelf.ts'
@@ -11,7 +12,7 @@ import { inColumns } from '../tui/text/lines.ts'
 import { readArguments } from './arguments.ts'
 import { answer, type Command, jsonText, NO_ANSWER, type Outcome, Refusal, type World } from './command.ts'
 import { openStore } from './kept.ts'
-import { namedFood, shelfFromText } from './shelf-source.ts'
+import { namedFood, readShelfText } from './shelf-source.ts'
 
 const KINDS = {
   mark: 'text',
@@ -133,14 +134,6 @@ async function edited(
       const of = { food: reading.food.id, grams: reading.grams }
       return verb === 'take' ? { do: 'take', ...of } : { do: verb, ...of, ...extras }
     })
-    // A food that is set for the first time is put there.
-    const { document } = await store.read()
-    const there = new Set(document.shelf.items.map(({ food }) => food))
-    changes = changes.map(change =>
-      change.do === 'set' && change.grams !== undefined && !there.has(change.food)
-        ? { ...change, do: 'add', grams: change.grams }
-        : change,
-    )
   }
   const label = `${verb} ${rest.join(', ').slice(0, 80)}`
   return said(await store.change(changes, plainText(label)), ({ document }) => {
@@ -175,37 +168,46 @@ async function imported(rest: string[], options: Options, store: ShelfStore, wor
     throw new Refusal('shelf import needs one file, or - for standard input')
   const label = path === '-' ? 'standard input' : plainText(path).slice(0, 100)
   const text = path === '-' ? await world.readStdin() : await world.readFile(path)
-  const read = shelfFromText(text, label, world)
-  const own = await importOwnFoods(text, store)
+  const own = await ownFoodsInText(text)
+  const { shelf: read, told } = readShelfText(text, label, world, own)
+  const fresh = await keepOwnFoods(own, store)
   const kept = options.replace
     ? await store.replace(read, `import ${label}`)
-    : await store.change(
-        read.items.map(({ food, grams, mark, useBy, note }) => ({
-          do: 'add',
-          food,
-          grams,
-          mark,
-          useBy,
-          note,
-        })),
-        `import ${label}`,
-      )
-  return said(
-    kept,
-    () =>
-      `${read.items.length} foods ${options.replace ? 'are the shelf now' : 'added'}${own === 0 ? '' : `, ${own} own foods`}`,
+    : await store.change(additionsOf(read), `import ${label}`)
+  return said(kept, () =>
+    [
+      ...told,
+      `${counted(read.items.length, 'food')} ${options.replace ? (read.items.length === 1 ? 'is the shelf now' : 'are the shelf now') : 'added'}${fresh === 0 ? '' : `, and ${counted(fresh, 'own food')} kept`}`,
+    ].join('\n'),
   )
 }
 
-/** Own foods travel with an exported shelf: those in the text that are not kept yet are kept. */
-async function importOwnFoods(text: string, store: ShelfStore): Promise<number> {
-  if (!text.includes('"own_foods"')) return 0
-  const { ownFoodsIn } = await import('./own-foods.ts')
-  const given = ownFoodsIn((JSON.parse(text) as { own_foods: unknown[] }).own_foods)
+const counted = (n: number, one: string): string => `${n} ${one}${n === 1 ? '' : 's'}`
+
+/** Foods from packets travel with an exported shelf: those in a file's text that are sound. */
+async function ownFoodsInText(text: string): Promise<OwnFood[]> {
+  if (!text.includes('"own_foods"')) return []
+  try {
+    const { own_foods: given } = JSON.parse(text.replace(/^\ufeff/, '')) as { own_foods?: unknown }
+    return Array.isArray(given) ? (await import('./own-foods.ts')).ownFoodsIn(given) : []
+  } catch {
+    // No JSON: reading the shelf says so.
+    return []
+  }
+}
+
+/** Keeps those that are not kept yet, and says how many those were. */
+async function keepOwnFoods(given: readonly OwnFood[], store: ShelfStore): Promise<number> {
+  if (given.length === 0) return 0
+  const { idOf } = await import('./own-foods.ts')
   const { document } = await store.read()
-  const known = new Set(ownFoodsIn(document.ownFoods).map(({ id }) => id))
+  const known = new Set(document.ownFoods.map(idOf))
   const fresh = given.filter(({ id }) => !known.has(id))
-  if (fresh.length > 0) await store.setOwnFoods([...document.ownFoods, ...fresh])
+  if (fresh.length === 0) return 0
+  await store.setOwnFoods(kept => {
+    const there = new Set(kept.map(idOf))
+    return [...kept, ...fresh.filter(({ id }) => !there.has(id))]
+  })
   return fresh.length
 }
 

@@ -36,17 +36,21 @@ export class Edge {
   private readonly opened: Opened
   private readonly draw: () => void
   private readonly quit: () => void
+  private readonly today: () => string
   private queue: Promise<void> = Promise.resolve()
   private pending = 0
   private readonly pairer = new Pairer()
   private pause: NodeJS.Timeout | undefined
   private slow: NodeJS.Timeout | undefined
   private asking = false
+  private turning: NodeJS.Timeout | undefined
+  /** keys that wait until what is kept has been read: acting on the sample, they would overwrite it */
+  private held: Event[] | null = null
 
   constructor(of: {
     state: State
     table: Table
-    today: string
+    today: () => string
     colour: boolean
     opened: Opened
     draw: () => void
@@ -56,18 +60,23 @@ export class Edge {
     this.opened = of.opened
     this.draw = of.draw
     this.quit = of.quit
+    this.today = of.today
     this.knowledge = knowledgeOf(of.table, of.today, of.colour)
   }
 
   /** A food from a packet takes part at once, as a row of the table would. */
   private learn(own: OwnFood): void {
-    const { table, today, colour } = this.knowledge
-    this.knowledge = knowledgeOf(withOwnFoods(table, [own]).table, today, colour)
+    const { table, colour } = this.knowledge
+    this.knowledge = knowledgeOf(withOwnFoods(table, [own]).table, this.today, colour)
   }
 
   /** Events in their order, and one drawing for all of them, so that fast typing is never slower than the screen. */
   send(...events: Event[]): void {
     for (const event of events) {
+      if (this.held !== null && event.event === 'key' && event.key.key !== 'interrupt') {
+        this.held.push(event)
+        continue
+      }
       const { state, effects } = update(this.state, event, this.knowledge)
       this.state = state
       for (const effect of effects) this.carryOut(effect)
@@ -75,8 +84,9 @@ export class Edge {
     this.draw()
   }
 
-  /** What is kept is read once the first frame stands. */
+  /** What is kept is read once the first frame stands; keys that are typed meanwhile act after it, in their order. */
   start(): void {
+    this.held = []
     this.inTurn(async () => {
       const settings = await this.opened.settings()
       const kept = settings.read()
@@ -86,18 +96,27 @@ export class Edge {
     this.inTurn(async () => {
       const store = await this.opened.store()
       this.tell(await store.read(), false)
-      this.carryOut({ effect: 'pair', question: this.state.question })
+    })
+    this.inTurn(async () => {
+      const keys = this.held ?? []
+      this.held = null
+      this.send({ event: 'opened' }, ...keys)
       // The finder is made before the first letter asks for it, once the screen stands.
       setTimeout(() => this.knowledge.finder, PAUSE_MS)
     })
   }
 
   /** Resolves when everything that was to be kept is. */
-  settled(): Promise<void> {
+  async settled(): Promise<void> {
+    let last: Promise<void>
+    do {
+      last = this.queue
+      await last
+    } while (last !== this.queue)
     clearTimeout(this.pause)
     clearTimeout(this.slow)
+    clearInterval(this.turning)
     this.pairer.end()
-    return this.queue
   }
 
   private carryOut(effect: Effect): void {
@@ -122,7 +141,10 @@ export class Edge {
         this.keep(effect.sample, store => store.change(effect.changes, effect.label))
         return
       case 'replace':
-        this.keep(effect.sample, store => store.replace(effect.shelf, effect.label))
+        // An empty shelf takes the place of the sample, never of one that another process has begun meanwhile.
+        this.keep(effect.sample, async (store, isBegun) =>
+          isBegun ? store.read() : store.replace(effect.shelf, effect.label),
+        )
         return
       case 'serve':
         this.keep(effect.sample, store => store.serve(effect.plate, effect.takes))
@@ -137,17 +159,18 @@ export class Edge {
     }
   }
 
-  /** Keeps something in the store; the sample shelf first, where this is the first change to it. */
+  /** Keeps something in the store; the sample shelf first, where this is the first change to any. */
   private keep(
     sample: Shelf | null,
-    act: (store: ShelfStore) => Promise<Kept>,
+    act: (store: ShelfStore, isBegun: boolean) => Promise<Kept>,
     isUndo: boolean | null = null,
   ): void {
     this.pending++
     this.inTurn(async () => {
       const store = await this.opened.store()
-      if (sample !== null) await store.replace(sample, 'keep the sample shelf')
-      const kept = await act(store)
+      const isBegun = sample !== null && (await store.read()).document.begun
+      if (sample !== null && !isBegun) await store.replace(sample, 'keep the sample shelf')
+      const kept = await act(store, isBegun)
       this.pending--
       this.tell(kept, isUndo !== null, isUndo === true)
     })
@@ -190,6 +213,7 @@ export class Edge {
       const answer = await this.pairer.find({ shelf, settings, table })
       this.send({ event: 'paired', question, answer })
     } catch (error) {
+      this.state = { ...this.state, stale: false, slow: false }
       this.send({ event: 'said', message: (error as Error).message })
     }
     this.asking = false
@@ -204,21 +228,24 @@ export class Edge {
   /** An answer is late: it is waited for in sight, and the spinner turns until it comes. */
   private wait(): void {
     this.send({ event: 'slow', question: this.state.question })
-    const turning = setInterval(() => {
+    clearInterval(this.turning)
+    this.turning = setInterval(() => {
       if (this.state.slow) this.send({ event: 'tick' })
-      else clearInterval(turning)
+      else clearInterval(this.turning)
     }, SPIN_MS)
-    turning.unref()
+    this.turning.unref()
   }
 }
 
 /** The table with its finder, which is made when it is first asked for: the first frame needs none. */
-function knowledgeOf(table: Table, today: string, colour: boolean): Knowledge {
+function knowledgeOf(table: Table, today: () => string, colour: boolean): Knowledge {
   let finder: Finder | undefined
   return {
     table,
-    today,
     colour,
+    get today() {
+      return today()
+    },
     get finder() {
       finder ??= createFinder(table.foods)
       return finder

@@ -14,6 +14,8 @@ export interface ScreensOptions extends Opened {
   table: Table
   /** the shelf that is shown while the cook has kept none */
   sampleShelf: Shelf
+  /** does the cook keep a shelf? then the sample is not shown while it is read */
+  kept: boolean
   colour: boolean
   /** words instead of drawings, for screen readers */
   spoken: boolean
@@ -68,6 +70,7 @@ export async function runScreens(options: ScreensOptions): Promise<number> {
     ...size(),
     shelf: options.sampleShelf,
     sample: true,
+    opening: options.kept,
     settings: DEFAULT_SETTINGS,
     spoken: options.spoken,
     message: '',
@@ -110,7 +113,8 @@ export async function runScreens(options: ScreensOptions): Promise<number> {
   const edge: Edge = new Machine({
     state: { ...state, ...size() },
     table: options.table,
-    today: bare.today,
+    // Asked anew each time: the screens may stand open past midnight.
+    today: () => dayOf(options.now()),
     colour: options.colour,
     opened: options,
     draw,

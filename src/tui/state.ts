@@ -76,6 +76,8 @@ export interface State {
   shelf: Shelf
   /** the shelf is the sample: nothing is kept yet */
   sample: boolean
+  /** what the cook keeps is being read: until then no shelf is shown, and keys wait */
+  opening: boolean
   find: string
   cursor: number
   order: Order
@@ -109,7 +111,7 @@ export interface State {
 export interface Knowledge {
   table: Table
   finder: Finder
-  /** today, YYYY-MM-DD */
+  /** today, YYYY-MM-DD; it may change while the screens are open */
   today: string
   colour: boolean
 }
@@ -126,6 +128,8 @@ export type Event =
       label: string | null
       restored: boolean
     }
+  /** what is kept has been read, or could not be: from here on keys act */
+  | { event: 'opened' }
   | { event: 'paired'; question: number; answer: PairingAnswer }
   | { event: 'slow'; question: number }
   | { event: 'said'; message: string }
@@ -158,9 +162,11 @@ export function firstState(of: {
   settings: Settings
   spoken: boolean
   message: string
+  opening?: boolean
 }): State {
   return {
     screen: 'shelf',
+    opening: false,
     find: '',
     cursor: 0,
     order: 'as put',

@@ -16,6 +16,8 @@ export function update(state: State, event: Event, knowledge: Knowledge): Update
       return only({ ...state, columns: event.columns, rows: event.rows })
     case 'kept':
       return kept(state, event, knowledge)
+    case 'opened':
+      return asked({ ...state, opening: false }, knowledge)
     case 'paired':
       if (event.question !== state.question) return only(state)
       return only({
@@ -46,6 +48,8 @@ function keyed(state: State, key: Key, knowledge: Knowledge): Updated {
     if (key.text === '<') return only({ ...state, message: 'Undoing ...' }, { effect: 'undo' })
     if (key.text === '>') return only({ ...state, message: 'Doing it again ...' }, { effect: 'redo' })
   }
+  // A list belongs to the shelf, wherever it is pasted.
+  if (key.key === 'paste' && !state.asksServe) return shelfKeys({ ...state, screen: 'shelf' }, key, knowledge)
   if (!state.asksServe && (key.key === 'tab' || key.key === 'back-tab')) {
     const step = key.key === 'tab' ? 1 : SCREENS.length - 1
     const screen = SCREENS[(SCREENS.indexOf(state.screen) + step) % SCREENS.length]!

@@ -9,11 +9,11 @@ const finder = createFinder(table.foods)
 
 /** A world without a process: files and standard input as given, 80 columns, no colour, a fixed day. */
 export function fakeWorld(
-  given: { files?: Record<string, string>; stdin?: string; colour?: boolean } = {},
+  given: { files?: Record<string, string>; stdin?: string; colour?: boolean; home?: string } = {},
 ): World {
   const files = given.files ?? {}
   return {
-    env: { SHORTSTAVE_HOME: '/nonexistent/shortstave' },
+    env: { SHORTSTAVE_HOME: given.home ?? '/nonexistent/shortstave' },
     columns: 80,
     colour: given.colour ?? false,
     interactive: false,

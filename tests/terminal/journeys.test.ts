@@ -127,6 +127,25 @@ describe('in a real terminal', () => {
     await second.shows('▸ Lentils, brown, dry')
   })
 
+  it('opens a kept shelf without the sample, and takes keys typed before it is read for that shelf', async () => {
+    const first = start()
+    await first.shows('the sample shelf')
+    first.type('0')
+    await first.shows('An empty shelf')
+    first.type(`tofu firm${KEYS.enter}777${KEYS.enter}`)
+    await first.shows(/Tofu, firm +777 g/)
+    first.type(KEYS.ctrlC)
+    expect(await first.ends()).toBe(0)
+    const second = start({ home: first.home })
+    second.type('!')
+    await second.shows(/Tofu, firm +use up +777 g/)
+    second.type(KEYS.ctrlC)
+    expect(await second.ends()).toBe(0)
+    expect(second.written).not.toContain('sample')
+    const { shelf } = JSON.parse(readFileSync(join(first.home, 'kept', 'shelf.json'), 'utf8'))
+    expect(shelf.items).toMatchObject([{ food: 'tofu-firm', grams: 777, mark: 'use-up' }])
+  })
+
   it('draws anew when the window changes in the middle, and says kindly when it is too small', async () => {
     const screen = start({ columns: 120, rows: 40 })
     await screen.shows('the sample shelf')

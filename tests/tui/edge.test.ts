@@ -19,7 +19,11 @@ afterEach(() => {
   for (const home of homes.splice(0)) rmSync(home, { recursive: true, force: true })
 })
 
-function started(home = mkdtempSync(join(tmpdir(), 'shortstave-edge-')), sample: Shelf = GALLEY) {
+function started(
+  home = mkdtempSync(join(tmpdir(), 'shortstave-edge-')),
+  sample: Shelf = GALLEY,
+  today = () => '2026-06-01',
+) {
   homes.push(home)
   const state = firstState({
     columns: 80,
@@ -33,7 +37,7 @@ function started(home = mkdtempSync(join(tmpdir(), 'shortstave-edge-')), sample:
   const edge = new Edge({
     state,
     table: knowledge.table,
-    today: '2026-06-01',
+    today,
     colour: false,
     opened: {
       store: async () => new ShelfStore(home),
@@ -125,6 +129,86 @@ describe('the edge', () => {
     await edge.settled()
     expect(edge.state.shelf.items[0]!.mark).toBe('use-up')
     expect(edge.state.message).not.toBe('')
+  })
+})
+
+describe('keys that are typed while what is kept is still read', () => {
+  it('act on the shelf that is kept, never on the sample', async () => {
+    const first = started()
+    first.press('0')
+    await first.edge.settled()
+    await new ShelfStore(first.home).change([{ do: 'add', food: 'tofu-firm', grams: 777 }], 'add tofu')
+    const again = started(first.home)
+    again.press('!')
+    expect(again.edge.state.shelf).toEqual(GALLEY)
+    await again.edge.settled()
+    const { document } = await new ShelfStore(first.home).read()
+    expect(document.shelf.items.map(({ food, grams, mark }) => [food, grams, mark])).toEqual([
+      ['tofu-firm', 777, 'use-up'],
+    ])
+    expect(again.edge.state.shelf).toEqual(document.shelf)
+  })
+
+  it('change one setting, and leave the others as they are kept', async () => {
+    const home = mkdtempSync(join(tmpdir(), 'shortstave-edge-'))
+    new SettingsStore(home).write({ ...DEFAULT_SETTINGS, servings: 7, without: ['peanut'] })
+    const { edge, press } = started(home)
+    press('tab', 'e')
+    await edge.settled()
+    const { settings } = new SettingsStore(home).read()
+    expect(settings).toEqual({ ...DEFAULT_SETTINGS, servings: 7, without: ['peanut'], eggs: true })
+  })
+
+  it('are kept where Ctrl+C follows them at once', async () => {
+    const { edge, press, home } = started()
+    press('!', 'interrupt')
+    await edge.settled()
+    const { document } = await new ShelfStore(home).read()
+    expect(document.shelf.items[0]!.mark).toBe('use-up')
+  })
+})
+
+describe('a shelf that another process begins while the sample is shown', () => {
+  const begun = async () => {
+    const screens = started()
+    await until(() => !screens.edge.state.stale)
+    await new ShelfStore(screens.home).change([{ do: 'add', food: 'tofu-firm', grams: 777 }], 'add tofu')
+    return screens
+  }
+  it.each(['!', '0', '#'])('is not overwritten by %s', async key => {
+    const { edge, press, home } = await begun()
+    press(key)
+    await edge.settled()
+    const { document } = await new ShelfStore(home).read()
+    expect(document.shelf.items.map(({ food, grams }) => [food, grams])).toEqual([['tofu-firm', 777]])
+    expect(edge.state.shelf).toEqual(document.shelf)
+    expect(edge.state.sample).toBe(false)
+  })
+})
+
+describe('what the settings tell', () => {
+  it('refuses planning on the sample shelf too', async () => {
+    const home = mkdtempSync(join(tmpdir(), 'shortstave-edge-'))
+    new SettingsStore(home).write({ ...DEFAULT_SETTINGS, conditions: ['phenylketonuria'] })
+    const { edge } = started(home)
+    await edge.settled()
+    expect(edge.state.sample).toBe(true)
+    expect(edge.state.refusal).not.toBeNull()
+    expect(edge.state.answer).toBeNull()
+  })
+})
+
+describe('past midnight', () => {
+  it('a plate is kept under the new day', async () => {
+    let day = '2026-06-01'
+    const { edge, press, home } = started(undefined, GALLEY, () => day)
+    await until(() => edge.state.answer !== null)
+    press('tab', 'enter')
+    day = '2026-06-02'
+    press('s', 'y')
+    await edge.settled()
+    const { document } = await new ShelfStore(home).read()
+    expect(document.plates.map(plate => plate.day)).toEqual(['2026-06-02'])
   })
 })
 

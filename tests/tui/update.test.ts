@@ -147,6 +147,13 @@ describe('use-by days', () => {
 })
 
 describe('pastes', () => {
+  it('belong to the shelf, wherever they are made', () => {
+    for (const screen of ['bench', 'plate'] as const) {
+      const { state } = typed(opened(GALLEY, { screen }), { key: 'paste', text: '200 g tofu\n1 cup oats' })
+      expect(state.screen).toBe('shelf')
+      expect(state.pasted).toHaveLength(2)
+    }
+  })
   it('of nothing are no list', () => {
     const { state } = typed(opened(), { key: 'paste', text: ' \n \n' })
     expect(state.pasted).toBeNull()
@@ -337,7 +344,9 @@ describe('plate', () => {
     const lentils = { food: knowledge.table.foodById.get('lentils-red-dry')!, grams: 80 }
     const alone = { ...plate, plate: [lentils] }
     const screen = plain(view(alone, knowledge))
-    const said = Number(/lifts it 1 {2}to +(\d+)/.exec(screen)![1])
+    const [, gain, said] = /lifts it 1 {2}\+(\d+) to (\d+)/.exec(screen)!.map(Number)
+    const before = Number(/DIAAS (\d+)/.exec(screen)![1])
+    expect(before + gain!).toBe(said)
     const tried = typed(alone, '1').state
     expect(tried.plate).not.toEqual([lentils])
     expect(plain(view(tried, knowledge))).toContain(`DIAAS ${said} `)

@@ -98,10 +98,63 @@ describe('every screen, at every size', () => {
     for (const [state, keys] of [
       [opened(), 'Tab Enter ! . # @ = < / + ?'],
       [bench, 'Enter w c t n k a e d l b u p Tab ?'],
-      [plate, '←→ Enter a x 1-3 z s c f n Tab ?'],
+      [plate, '←→ Enter a x s c f n Tab ?'],
+      [typed(plate, 'down', 'x').state, '←→ Enter a x 1-3 z s c f n Tab ?'],
+      [{ ...bench, settings: { ...bench.settings, targetG: null, bodyMassKg: 70 } }, 'b i m u'],
     ] as const) {
       const lines = plain(view({ ...state, columns: 100, rows: 30 }, knowledge).slice(-2))
       for (const key of keys.split(' ')) expect(` ${lines}`).toContain(` ${key} `)
+    }
+  })
+
+  it('shows at 80 by 24 too every key that changes what is proposed, and none that does nothing', () => {
+    const keys = plain(view(bench, knowledge).slice(-2))
+    for (const key of ['Enter', ...'wctnkaedlbup', 'Tab', '?']) expect(` ${keys}`).toContain(` ${key} `)
+    const none = { ...bench, answer: { reached: false, reason: 'none', pairings: [] } }
+    expect(plain(view(none, knowledge).slice(-2))).not.toMatch(/Enter|why|compare/)
+    expect(plain(view(plate, knowledge).slice(-2))).not.toMatch(/lift|back/)
+  })
+
+  it('never cuts what is left out of the pairings', () => {
+    const settings = {
+      ...bench.settings,
+      targetG: null,
+      bodyMassKg: 70,
+      without: ['peanut', 'nuts'] as never,
+    }
+    for (const [columns, rows] of SIZES) {
+      const words = plain(view({ ...bench, settings, columns, rows }, knowledge)).replace(/\s+/g, ' ')
+      expect(words).toContain('without peanuts, tree nuts')
+    }
+  })
+
+  it('shows no shelf, and not the sample, while the cook’s own is read', () => {
+    const screen = plain(view(opened(GALLEY, { sample: true, opening: true }), knowledge))
+    expect(screen).toContain('Opening your shelf')
+    expect(screen).not.toMatch(/sample|Lentils/)
+  })
+
+  it('says by which alias a food was found whose name has nothing of it', () => {
+    const screen = plain(view(typed(opened(), 'masoor').state, knowledge))
+    expect(screen).toMatch(/Lentils, red, dry {2}masoor/)
+    expect(plain(view(typed(opened(), 'lentils').state, knowledge))).toMatch(/Lentils, red, dry {3}/)
+  })
+
+  it('says of a lift that it must be bought, however long its name and small the window', () => {
+    const lentils = { food: knowledge.table.foodById.get('lentils-red-dry')!, grams: 150 }
+    const alone = { ...plate, plate: [lentils], shelf: { items: [item('lentils-red-dry', 900)] } }
+    for (const [columns, rows] of SIZES) {
+      const lines = view({ ...alone, columns, rows }, knowledge)
+      expect(plain(lines)).toContain('(to buy)')
+    }
+  })
+
+  it('keeps the food under the cursor in sight on a full plate in a small window', () => {
+    const full = knowledge.table.foods.slice(0, 14).map(food => ({ food, grams: 50 }))
+    for (const plateCursor of [0, 7, 13]) {
+      const lines = view({ ...plate, plate: full, plateCursor, columns: 60, rows: 16 }, knowledge)
+      expect(plain(lines)).toContain(`▸  ${'abcdefghijklmn'[plateCursor]} `)
+      expect(plain(lines)).toContain('Allergens:')
     }
   })
 
@@ -136,7 +189,7 @@ describe('every screen, at every size', () => {
   it('never cuts a grave caution or the allergens, however small the window', () => {
     const beans = { food: knowledge.table.foodById.get('kidney-beans-dry')!, grams: 60 }
     const full = [beans, ...plate.plate.slice(0, 2)]
-    for (const [columns, rows] of SIZES.slice(1)) {
+    for (const [columns, rows] of SIZES) {
       const words = plain(view({ ...plate, columns, rows, plate: full }, knowledge)).replace(/\s+/g, ' ')
       expect(words).toContain('Allergens:')
       // Beside the staves its words stand between other lines; there it is enough that it begins and ends.

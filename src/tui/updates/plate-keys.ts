@@ -59,7 +59,7 @@ export function plateKeys(state: State, key: Key, knowledge: Knowledge): Updated
   }
 }
 
-/** One practical step more or less of the food under the cursor: its own step, ten of them from 100 g on. */
+/** One practical step more or less of the food under the cursor: its own step, two of them from 100 g on. */
 function stepped(state: State, direction: 1 | -1): Updated {
   const under = state.plate[state.plateCursor]
   if (under === undefined) return only(state)

@@ -32,10 +32,14 @@ const SPINNER = ['◴', '◷', '◶', '◵']
 /** Columns of the chosen pairing's staves, beside a wide list, with the gap before them. */
 const PANEL = 62
 
-const KEYS: readonly KeyName[] = [
-  ['Enter', 'to the plate'],
-  ['w', 'why'],
-  ['c', 'compare'],
+const keysOf = (state: State): readonly KeyName[] => [
+  ...((state.answer?.pairings.length ?? 0) === 0
+    ? []
+    : ([
+        ['Enter', 'to the plate', 'take'],
+        ['w', 'why'],
+        ['c', 'compare'],
+      ] as const)),
   ['t', 'target'],
   ['n', 'servings'],
   ['k', 'foods'],
@@ -43,8 +47,14 @@ const KEYS: readonly KeyName[] = [
   ['e', 'eggs'],
   ['d', 'dairy'],
   ['l', 'energy'],
-  ['b', 'body mass'],
-  ['u', 'usual ranges'],
+  ['b', 'body mass', 'body'],
+  ...(fromBodyMass(state.settings) === ''
+    ? []
+    : ([
+        ['i', 'intake'],
+        ['m', 'meals'],
+      ] as const)),
+  ['u', 'usual ranges', 'ranges'],
   ['p', 'pattern'],
   ['Tab', 'plate'],
   LEAVE_KEY,
@@ -66,12 +76,16 @@ export function benchView(state: State, colour: boolean): string[] {
       state,
       columns < 76 ? `${target}${servings}` : `${target}${servings} · up to ${settings.foodsAtMost} foods`,
     ),
-    STYLE.dim(clip(` ${limitsText(state)}`, columns - 1)),
+    // What is left out must be read: it is never cut.
+    ...wrapLines(` ${limitsText(state)}`, columns - 1, 1).map(STYLE.dim),
     '',
   ]
   const foot = [
     ...footLines(state, standingNote(state)),
-    ...keyLines(state, state.prompt !== null ? PROMPT_KEYS : state.compared === null ? KEYS : COMPARE_KEYS),
+    ...keyLines(
+      state,
+      state.prompt !== null ? PROMPT_KEYS : state.compared === null ? keysOf(state) : COMPARE_KEYS,
+    ),
   ]
   const chosen = state.answer?.pairings[state.chosen]
   const isPlain = state.spoken || !showsNumbers(settings)

@@ -11,10 +11,11 @@ const BESIDE_FROM = 124
 /** From so many rows on, the keys may take two lines. */
 const TWO_KEY_LINES_FROM = 22
 
-export type KeyName = readonly [key: string, what: string]
-/** What works while a line is being typed. */
+/** A key, what it does, and that in fewer letters, where there are many keys and little room. */
+export type KeyName = readonly [key: string, what: string, short?: string]
 /** How the program is left, told on every screen where there is room. */
 export const LEAVE_KEY: KeyName = ['Ctrl+C', 'leave']
+/** What works while a line is being typed. */
 export const PROMPT_KEYS: readonly KeyName[] = [
   ['Enter', 'take it'],
   ['Esc', 'leave it'],
@@ -38,9 +39,22 @@ export function topLine(state: State, right: string): string {
  */
 export function keyLines(state: State, keys: readonly KeyName[]): string[] {
   const most = state.rows >= TWO_KEY_LINES_FROM && state.page === null ? 2 : 1
-  const lines = fill(state.columns, most, keys, helpWorks(state) ? [['?', 'all keys']] : [])
+  const always: KeyName[] = helpWorks(state) ? [['?', 'all keys']] : []
+  const short = keys.map(([key, what, fewer]): KeyName => [key, fewer ?? what])
+  // All of them with room between, else closer, else in fewer letters.
+  const [, lines, gap] = [[keys, 3] as const, [keys, 2] as const, [short, 2] as const].reduce<
+    readonly [number, KeyName[][], number]
+  >(
+    (best, [names, between]) => {
+      if (best[0] === keys.length) return best
+      const filled = fill(state.columns, most, names, always, between)
+      const count = filled.flat().length - always.length
+      return count > best[0] ? [count, filled, between] : best
+    },
+    [-1, [], 3],
+  )
   return lines.map(
-    line => ` ${line.map(([key, what]) => `${STYLE.bold(key)} ${STYLE.dim(what)}`).join('   ')}`,
+    line => ` ${line.map(([key, what]) => `${STYLE.bold(key)} ${STYLE.dim(what)}`).join(' '.repeat(gap))}`,
   )
 }
 
@@ -52,14 +66,16 @@ function fill(
   most: number,
   keys: readonly KeyName[],
   always: readonly KeyName[],
+  gap: number,
 ): KeyName[][] {
-  const widthOfKey = ([key, what]: KeyName) => widthOf(key) + widthOf(what) + 4
+  const widthOfKey = ([key, what]: KeyName) => widthOf(key) + 1 + widthOf(what) + gap
+  const room = columns - 2 + gap
   const kept = always.reduce((sum, entry) => sum + widthOfKey(entry), 0)
   const lines: KeyName[][] = [[]]
   let width = 0
   for (const entry of keys) {
     const last = lines.length === most
-    if (width + widthOfKey(entry) > columns + 1 - (last ? kept : 0)) {
+    if (width + widthOfKey(entry) > room - (last ? kept : 0)) {
       if (last) break
       lines.push([])
       width = 0
@@ -67,7 +83,7 @@ function fill(
     lines.at(-1)!.push(entry)
     width += widthOfKey(entry)
   }
-  if (width + kept > columns + 1) lines.push([])
+  if (width + kept > room) lines.push([])
   lines.at(-1)!.push(...always)
   return lines
 }
@@ -76,7 +92,8 @@ function fill(
 export function promptLines(state: State): string[] {
   const { prompt, columns } = state
   if (prompt === null) return []
-  const lines = [` ${STYLE.bold(clip(prompt.label, columns - 2))}`, ` > ${typedText(prompt, columns - 4)}`]
+  const label = wrapLines(` ${prompt.label}`, columns - 1, 1).slice(0, 2)
+  const lines = [...label.map(STYLE.bold), ` > ${typedText(prompt, columns - 4)}`]
   if (prompt.problem !== null) lines.push(...wrapLines(`   ${prompt.problem}`, columns - 1, 3).slice(0, 3))
   return lines
 }

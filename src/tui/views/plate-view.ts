@@ -4,6 +4,7 @@ import { allergenName } from '../../kitchen/allergen-names.ts'
 import { type Caution, cautionsFor } from '../../kitchen/cautions.ts'
 import { STAVE_LABELS, STAVE_NAMES, STAVES } from '../../nutrition/amino-acids.ts'
 import { type PlateScore, scorePlate } from '../../nutrition/plate-score.ts'
+import type { LiftOption } from '../../pairing/problem.ts'
 import { liftsOf, targetOf } from '../problem-of.ts'
 import type { Knowledge, State } from '../state.ts'
 import { drawStaves, stavesAsText, stavesSketch } from '../staves/draw-staves.ts'
@@ -13,6 +14,7 @@ import { showsNumbers } from '../stepping-back.ts'
 import { STYLE } from '../style.ts'
 import { diaasText, grams, kcal, shortDiaas, signed, wholeScore } from '../text/figures.ts'
 import { clip, padEnd, padStart, wrapLines } from '../text/lines.ts'
+import { widthOf } from '../text/width.ts'
 import {
   beside,
   bodyRows,
@@ -24,13 +26,16 @@ import {
   LEAVE_KEY,
   PROMPT_KEYS,
   topLine,
+  windowOf,
 } from './frame.ts'
 import { standingNote } from './standing-note.ts'
 
 /** Rows of the staves: fewer are not drawn, more add nothing. */
 const STAVES_ROWS = { least: 4, most: 18, mostWide: 28 }
 /** Columns of the foods, beside wide staves, with the gap before them. */
-const PANEL = 54
+const panelColumns = (columns: number) => Math.max(54, Math.min(70, Math.round(columns * 0.45)))
+/** Foods that stay in sight, however small the window. */
+const FOODS_AT_LEAST = 3
 /** Cautions of this weight are about the food itself (raw beans, cassava), and are never cut short. */
 const GRAVE = 74
 
@@ -47,26 +52,45 @@ export function plateView(state: State, knowledge: Knowledge): string[] {
         : servings.replace(' · ', ''),
     ),
   ]
-  const foot = [...footOf(state), ...keyLines(state, keysOf(state))]
+  const lifts = plate.length === 0 ? [] : liftsOf(state, knowledge)
+  const foot = [...footOf(state), ...keyLines(state, keysOf(state, lifts.length))]
   const room = bodyRows(state, top, foot)
   const body =
     plate.length === 0
       ? emptyLines(state, knowledge)
       : isWide(state) && !state.spoken
-        ? wideBody(state, score, knowledge, room)
-        : stackedBody(state, score, knowledge, room)
+        ? wideBody(state, score, lifts, knowledge, room)
+        : stackedBody(state, score, lifts, knowledge, room)
   return fitted(state, top, body, foot)
 }
 
-/** The list, the score and the lifts stay; the staves take the height that is left. */
-function stackedBody(state: State, score: PlateScore<Food>, knowledge: Knowledge, room: number): string[] {
+/**
+ * Score, allergens and grave cautions always stand there whole. Then come the foods around the cursor, what would lift
+ * them, and the staves with the height that is left.
+ */
+function stackedBody(
+  state: State,
+  score: PlateScore<Food>,
+  options: readonly LiftOption[],
+  knowledge: Knowledge,
+  room: number,
+): string[] {
   const { columns } = state
   const facts = factLines(score, state, columns)
   const list = foodLines(state, score, columns, knowledge.colour)
-  const lifts = liftLines(state, score, knowledge, columns)
+  const lifts = liftLines(state, score, options, columns)
   const care = careOf(score, state, columns)
-  const held = facts.length + list.length + lifts.length + care.must.length
-  const spare = room - held - 2
+  let left = Math.max(0, room - facts.length - care.must.length)
+  const taken = (wanted: number) => {
+    const rows = Math.max(0, Math.min(wanted, left))
+    left -= rows
+    return rows
+  }
+  let listed = taken(Math.min(FOODS_AT_LEAST, list.length))
+  let lifting = taken(Math.min(1, lifts.length))
+  listed += taken(list.length - listed)
+  lifting += taken(lifts.length - lifting)
+  const spare = left - 2
   // Cautions that are not grave give way to the staves where both don't fit.
   const more = care.may.slice(0, Math.max(0, spare - STAVES_ROWS.least - 4))
   const gap = spare - more.length > STAVES_ROWS.least + 2 ? [''] : []
@@ -74,27 +98,34 @@ function stackedBody(state: State, score: PlateScore<Food>, knowledge: Knowledge
   return [
     ...facts,
     ...chartLines(state, score, height, columns - 2, knowledge.colour),
-    ...list,
+    ...windowOf(list, state.plateCursor, listed).shown,
     ...gap,
-    ...lifts,
+    ...lifts.slice(0, lifting),
     ...care.must,
     ...more,
   ]
 }
 
 /** Staves on the left, as large as the window; foods, lifts and cautions on the right. */
-function wideBody(state: State, score: PlateScore<Food>, knowledge: Knowledge, room: number): string[] {
-  const columns = state.columns - PANEL
+function wideBody(
+  state: State,
+  score: PlateScore<Food>,
+  options: readonly LiftOption[],
+  knowledge: Knowledge,
+  room: number,
+): string[] {
+  const panelled = panelColumns(state.columns)
+  const columns = state.columns - panelled
   const facts = factLines(score, state, state.columns)
   const height = Math.min(STAVES_ROWS.mostWide, room - facts.length - 4)
   const chart = ['', ...chartLines(state, score, height, columns - 2, knowledge.colour)]
-  const width = PANEL - 2
+  const width = panelled - 2
   const { must, may } = careOf(score, state, width)
   const panel = [
     '',
     ...foodLines(state, score, width, knowledge.colour),
     '',
-    ...liftLines(state, score, knowledge, width),
+    ...liftLines(state, score, options, width),
     '',
     ...must,
     '',
@@ -120,7 +151,7 @@ function chartLines(
     )
     return wrapLines(` ${stavesSketch(staves)}  ${figures.join('  ')}`, state.columns - 1, 12).slice(
       0,
-      Math.max(1, height + 2),
+      Math.max(0, height + 2),
     )
   }
   const drawing = drawStaves({ portions: state.plate, pattern, width: Math.min(width, 92), height, colour })
@@ -180,8 +211,12 @@ function foodLines(state: State, score: PlateScore<Food>, columns: number, colou
 }
 
 /** What would lift the plate, by the keys that try it; or that nothing need or would. */
-function liftLines(state: State, score: PlateScore<Food>, knowledge: Knowledge, columns: number): string[] {
-  const options = liftsOf(state, knowledge)
+function liftLines(
+  state: State,
+  score: PlateScore<Food>,
+  options: readonly LiftOption[],
+  columns: number,
+): string[] {
   if (options.length === 0) {
     const enough = score.diaas !== null && score.diaas >= 100
     const words = enough
@@ -189,15 +224,24 @@ function liftLines(state: State, score: PlateScore<Food>, knowledge: Knowledge, 
       : 'No small change would lift it by a point.'
     return [STYLE.dim(clip(` ${words}`, columns - 1))]
   }
-  return options.map((option, i) => {
+  return options.flatMap((option, i) => {
     const there = state.plate.some(({ food }) => food.id === option.food.id)
     const size = grams(Math.abs(option.deltaG))
     const amount = option.deltaG < 0 ? `${size} less` : there ? `${size} more` : `add ${size}`
     const where = option.onShelf ? '' : ' (to buy)'
     const label = i === 0 ? 'lifts it ' : '         '
-    const start = ` ${STYLE.dim(label)}${STYLE.bold(String(i + 1))}  ${showsNumbers(state.settings) ? `to ${wholeScore(option.diaas).padStart(3)}  ` : ''}`
-    return start + clip(`${amount} ${option.food.name}${where}`, Math.max(10, columns - 22))
+    const gain = showsNumbers(state.settings) ? `${gainText(score, option).padEnd(11)}` : ''
+    const start = ` ${STYLE.dim(label)}${STYLE.bold(String(i + 1))}  ${gain}${amount} `
+    // Beside the staves there are lines enough; elsewhere a long name gives way to what must be known of it.
+    if (isWide(state)) return wrapLines(start + option.food.name + where, columns - 1, 11)
+    return start + clip(option.food.name, Math.max(10, columns - 1 - widthOf(start + where))) + where
   })
+}
+
+/** `+3 to 95`: what a lift gains, and the score that it leads to. The figures are those that are shown. */
+function gainText({ diaas }: PlateScore<Food>, option: LiftOption): string {
+  const after = wholeScore(option.diaas)
+  return diaas === null ? `to ${after}` : `${signed(Number(after) - Number(wholeScore(diaas)))} to ${after}`
 }
 
 /** What must be read: allergens, and grave cautions in full; and what may be cut, where the window is small. */
@@ -241,7 +285,7 @@ function shortOf({ plate, shelf, settings }: State): string {
     .join(', ')
 }
 
-function keysOf(state: State): readonly KeyName[] {
+function keysOf(state: State, lifts: number): readonly KeyName[] {
   if (state.prompt !== null) return PROMPT_KEYS
   if (state.asksServe)
     return [
@@ -260,8 +304,8 @@ function keysOf(state: State): readonly KeyName[] {
     ['Enter', 'amount'],
     ['a', 'add'],
     ['x', 'off'],
-    ['1-3', 'try a lift'],
-    ['z', 'back'],
+    ...(lifts === 0 ? [] : [[lifts === 1 ? '1' : `1-${lifts}`, 'try a lift', 'lift'] as const]),
+    ...(state.before.length === 0 ? [] : [['z', 'go back', 'back'] as const]),
     ['s', 'serve'],
     ['c', 'card'],
     ['f', 'look'],

@@ -2,6 +2,7 @@ import type { Food } from '../../foods/food.ts'
 import { scoreBasis } from '../../foods/score.ts'
 import { STAVE_LABELS, STAVES, type Staves } from '../../nutrition/amino-acids.ts'
 import { shortestStave, stavesOfPlate } from '../../nutrition/staves.ts'
+import { matchedAlias } from '../matched-alias.ts'
 import { type ShelfRow, shelfRows } from '../rows.ts'
 import type { Knowledge, State } from '../state.ts'
 import { stavesSketch } from '../staves/draw-staves.ts'
@@ -32,11 +33,11 @@ const PANEL = 60
 
 /** What is on hand; typing finds, and offers foods of the table after it. */
 export function shelfView(state: State, knowledge: Knowledge): string[] {
-  const rows = shelfRows(state, knowledge)
+  const rows = state.opening ? [] : shelfRows(state, knowledge)
   const cursor = Math.max(0, Math.min(state.cursor, rows.length - 1))
   const count = `${state.shelf.items.length} ${state.shelf.items.length === 1 ? 'food' : 'foods'}`
   const top = [
-    topLine(state, `${state.sample ? 'the sample shelf' : 'your shelf'} · ${count}`),
+    topLine(state, state.opening ? 'your shelf' : `${shelfName(state)} · ${count}`),
     ` > ${state.find}${state.prompt === null ? STYLE.reverse(' ') : ''}${state.find === '' ? STYLE.dim(' type to find a food, or to add one') : ''}`,
   ]
   const foot = [...footLines(state, standing(state)), ...keyLines(state, keysOf(state, rows[cursor]))]
@@ -84,6 +85,7 @@ function hereTitle(state: State, rows: readonly ShelfRow[], at: number): string 
 }
 
 function emptyLines(state: State): string[] {
+  if (state.opening) return ['   Opening your shelf ...']
   if (state.find !== '')
     return [
       `   No food is called "${clip(state.find, 40)}" or nearly so.`,
@@ -97,9 +99,14 @@ function emptyLines(state: State): string[] {
   ]
 }
 
+function shelfName({ sample, columns }: State): string {
+  if (!sample) return 'your shelf'
+  return columns < 72 ? 'sample' : 'the sample shelf'
+}
+
 /** Said while nothing else is: what the sample is, or how much has been served of today. */
-function standing({ sample, columns }: State): string {
-  if (!sample) return ''
+function standing({ sample, opening, columns }: State): string {
+  if (!sample || opening) return ''
   const long =
     'A sample: the galley of a river survey boat. It is kept with your first change; 0 starts an empty shelf.'
   return columns > long.length + 2 ? long : 'A sample, kept with your first change; 0 starts an empty shelf.'
@@ -107,6 +114,7 @@ function standing({ sample, columns }: State): string {
 
 function keysOf(state: State, row: ShelfRow | undefined): readonly KeyName[] {
   if (state.prompt !== null) return PROMPT_KEYS
+  if (state.opening) return [LEAVE_KEY]
   const sample: KeyName[] = state.sample && state.find === '' ? [['0', 'start empty']] : []
   const clear: KeyName[] = state.find === '' ? [] : [['Esc', 'clear']]
   const rest: KeyName[] = [...clear, ['<', 'undo'], ['/', 'order'], ['+', 'packet'], LEAVE_KEY]
@@ -167,8 +175,19 @@ function rowLine(
   const room = Math.max(8, columns - widthOf(right) - 5)
   const clipped = clip(name, room)
   const matched = withMarks(clipped, row.matched)
-  const filled = padEnd(under ? STYLE.bold(matched) : matched, room)
+  const filled = padEnd(
+    (under ? STYLE.bold(matched) : matched) + aliasOf(row, state, room - widthOf(name)),
+    room,
+  )
   return `${under ? ' ▸ ' : '   '}${filled} ${right}`
+}
+
+/** Behind the name, the alias that the find line met, where the name itself has nothing of it. */
+function aliasOf({ food, matched }: ShelfRow, { find }: State, room: number): string {
+  if (food === null || matched.length > 0 || find.trim() === '') return ''
+  const alias = matchedAlias(food, find)
+  const text = alias === null ? '' : `  ${alias}`
+  return widthOf(text) > room ? '' : STYLE.dim(text)
 }
 
 /** The letters that the find line met, underlined. */
