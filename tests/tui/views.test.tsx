@@ -1,5 +1,6 @@
 import { render } from 'ink-testing-library'
 import { describe, expect, it } from 'vitest'
+import type { Settings } from '../../src/shelf/settings.ts'
 import { Frame } from '../../src/tui/frame.tsx'
 import { helpPage } from '../../src/tui/pages.ts'
 import { widthOf } from '../../src/tui/text/width.ts'
@@ -99,7 +100,7 @@ describe('every screen, at every size', () => {
       [opened(), 'Tab Enter ! . # @ = < / + ?'],
       [bench, 'Enter w c t n k a e d l b u p Tab ?'],
       [plate, '←→ Enter a x s c f n Tab ?'],
-      [typed(plate, 'down', 'x').state, '←→ Enter a x 1-3 z s c f n Tab ?'],
+      [typed(plate, 'down', 'x').state, '←→ Enter a x 1-2 z s c f n Tab ?'],
       [{ ...bench, settings: { ...bench.settings, targetG: null, bodyMassKg: 70 } }, 'b i m u'],
     ] as const) {
       const lines = plain(view({ ...state, columns: 100, rows: 30 }, knowledge).slice(-2))
@@ -120,7 +121,7 @@ describe('every screen, at every size', () => {
       ...bench.settings,
       targetG: null,
       bodyMassKg: 70,
-      without: ['peanut', 'nuts'] as never,
+      without: ['peanut', 'tree-nuts'] as Settings['without'],
     }
     for (const [columns, rows] of SIZES) {
       const words = plain(view({ ...bench, settings, columns, rows }, knowledge)).replace(/\s+/g, ' ')
@@ -136,7 +137,7 @@ describe('every screen, at every size', () => {
 
   it('says by which alias a food was found whose name has nothing of it', () => {
     const screen = plain(view(typed(opened(), 'masoor').state, knowledge))
-    expect(screen).toMatch(/Lentils, red, dry {2}masoor/)
+    expect(screen).toMatch(/Lentils, red, dry {2}maso/)
     expect(plain(view(typed(opened(), 'lentils').state, knowledge))).toMatch(/Lentils, red, dry {3}/)
   })
 

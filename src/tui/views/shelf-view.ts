@@ -182,12 +182,14 @@ function rowLine(
   return `${under ? ' ▸ ' : '   '}${filled} ${right}`
 }
 
+/** Columns in which an alias is still known, with the gap before it. */
+const ALIAS_AT_LEAST = 7
+
 /** Behind the name, the alias that the find line met, where the name itself has nothing of it. */
 function aliasOf({ food, matched }: ShelfRow, { find }: State, room: number): string {
   if (food === null || matched.length > 0 || find.trim() === '') return ''
   const alias = matchedAlias(food, find)
-  const text = alias === null ? '' : `  ${alias}`
-  return widthOf(text) > room ? '' : STYLE.dim(text)
+  return alias === null || room < ALIAS_AT_LEAST ? '' : STYLE.dim(clip(`  ${alias}`, room))
 }
 
 /** The letters that the find line met, underlined. */
